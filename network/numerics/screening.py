@@ -10,6 +10,7 @@ from network.numerics.arrays import Floats, Seconds
 from network.numerics.screening_findings import Finding, finding
 from network.numerics.screening_rules import (
     DUST_M,
+    USUAL_SETTINGS,
     Range,
     ScreeningSettings,
     furthest,
@@ -20,8 +21,6 @@ from network.numerics.screening_rules import (
     stretches,
     time_faults,
 )
-
-USUAL_SETTINGS = ScreeningSettings()
 
 
 @dataclass(frozen=True, eq=False)

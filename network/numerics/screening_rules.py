@@ -13,6 +13,9 @@ Range = tuple[float, float]
 # Stages come to a tenth of a millimetre; this keeps binary dust from deciding a verdict.
 DUST_M = 1e-8
 
+WIDEST_SPIKE = 3  # readings
+JUMP_TO_MOVE = 4  # a jump is so many times what the stage moves beside it
+
 
 @dataclass(frozen=True)
 class ScreeningSettings:
@@ -104,23 +107,37 @@ def _flat_lines(
 
 
 def _spikes(stage_m: Floats, limit_m: float) -> tuple[Floats, Bools]:
-    """Up to three readings off the median of the seven around them by more than the limit.
+    """Up to three readings beyond both the one before and the one after by more than the limit.
 
-    They must also be off by more than three times the median departure in those seven, so that
-    the sharp peak of a flood stays silent.
+    They must also jump four times as far as the stage moves from one reading to the next around
+    them, so that the sharp peak of a flood stays silent.
     """
-    around = np.lib.stride_tricks.sliding_window_view(np.pad(stage_m, 3, mode="edge"), 7)
-    median = np.median(around, axis=1)
-    usual = np.median(np.abs(around - median[:, np.newaxis]), axis=1)
-    departure_m: Floats = stage_m - median
-    return departure_m, np.abs(departure_m) > np.maximum(limit_m, 3 * usual) + DUST_M
+    count = len(stage_m)
+    padded = np.pad(stage_m, 2, mode="edge")
+    departure_m, spike = np.zeros(count), np.zeros(count, dtype=np.bool_)
+    for width in range(1, min(WIDEST_SPIKE, count) + 1):
+        starts = count - width + 1
+        inside = np.lib.stride_tricks.sliding_window_view(stage_m, width)
+        before, after = padded[1 : 1 + starts], padded[width + 2 : width + 2 + starts]
+        above = inside.min(axis=1) - np.maximum(before, after)
+        below = np.minimum(before, after) - inside.max(axis=1)
+        moves = (
+            np.abs(before - padded[:starts]),
+            np.abs(after - padded[width + 3 : width + 3 + starts]),
+            np.abs(after - before) / (width + 1),
+        )
+        least_m = np.maximum(limit_m + DUST_M, JUMP_TO_MOVE * np.maximum.reduce(moves))
+        for i in np.flatnonzero(np.maximum(above, below) > least_m):
+            spike[i : i + width] = True
+            departure_m[i : i + width] = inside[i] - (before[i] + after[i]) / 2
+    return departure_m, spike
 
 
 def _steps(moves_m: Floats, limit_m: float) -> Bools:
     """A jump beyond the limit, at least four times what the intervals on either side move."""
     size = np.abs(moves_m)
     beside = np.pad(size, 1)
-    quiet = np.maximum(beside[:-2], beside[2:]) <= size / 4
+    quiet = JUMP_TO_MOVE * np.maximum(beside[:-2], beside[2:]) <= size
     jump: Bools = (size > limit_m + DUST_M) & quiet
     return jump
 

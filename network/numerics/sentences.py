@@ -31,7 +31,7 @@ def sentence(text: str, **values: float | str) -> Sentence:
     return Sentence(text, values)
 
 
-class Refused(ValueError):  # noqa: N818 - the word the services use too
+class Refused(ValueError):
     """Say why an input cannot be computed, and which row (from 1) and field is meant."""
 
     def __init__(

@@ -89,10 +89,9 @@ def _runs(
 def _check_enough(runs: int, pieces: int) -> None:
     if runs < LEAST_RUNS * pieces:
         text = gettext_noop(
-            "{runs} tow runs are too few for pieces: {pieces}; every piece needs at least "
-            "{least} runs."
+            "There are {runs} tow runs; every piece needs at least {least}, in all {needed}."
         )
-        values = {"runs": runs, "pieces": pieces, "least": LEAST_RUNS}
+        values = {"runs": runs, "least": LEAST_RUNS, "needed": LEAST_RUNS * pieces}
         raise Refused(sentence(text, **values), field_name="pieces")
 
 
