@@ -1,0 +1,1 @@
+"""The staff site: forms and lists over the books."""

@@ -1,0 +1,1 @@
+"""System checks of a deployment: clock, database, data folder, secret key."""

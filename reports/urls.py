@@ -1,0 +1,6 @@
+"""Addresses of the yearbook desk and the public library."""
+
+from django.urls import URLPattern
+
+app_name = "reports"
+urlpatterns: list[URLPattern] = []
