@@ -1,0 +1,159 @@
+"""A gauging from its typed sheet to its result: the one way of making the number."""
+
+import numpy as np
+
+from network.numerics import gauging_uncertainty as tables
+from network.numerics.arrays import Floats, Indices
+from network.numerics.channel_flows import channel_flows, whole_section
+from network.numerics.gauging_columns import Columns, lay_out
+from network.numerics.gauging_faults import BadSheet, find_faults
+from network.numerics.gauging_findings import Totals, of_whole
+from network.numerics.gauging_input import DischargeMethod, GaugingSettings, Meter, Sheet
+from network.numerics.gauging_result import Gauging, Preview, panels_of, verticals_of
+from network.numerics.gauging_uncertainty import Uncertainty
+from network.numerics.mean_stage import MeanStage, mean_stage
+from network.numerics.measured_verticals import Measured, flowing_depth_m, measure
+from network.numerics.unfinished_sheet import faultless_part
+from network.numerics.vertical_findings import of_verticals
+
+COMMON_PRACTICE = GaugingSettings()
+
+
+def compute(sheet: Sheet, settings: GaugingSettings = COMMON_PRACTICE) -> Gauging:
+    """Compute a gauging from a complete sheet.
+
+    Screen, stored row, workbook and PDF all take their numbers from here. Islands and piers:
+    several channels, their discharges summed. SI units as in the field names.
+    Raises BadSheet with every fault, by channel, vertical, point and field.
+    Source: ISO 748 (verticals, both methods, uncertainty), ISO 9196 (ice); see each module.
+    """
+    columns = lay_out(sheet, settings)
+    if faults := find_faults(sheet, columns):
+        raise BadSheet(faults)
+    return _computed(sheet, columns, settings)
+
+
+def preview(sheet: Sheet, settings: GaugingSettings = COMMON_PRACTICE) -> Preview:
+    """Give what a sheet gives so far, and its faults; a finished sheet gives compute's result.
+
+    Raises nothing: rows at fault are left out, verticals without a usable velocity count as
+    soundings.
+    """
+    try:
+        done = compute(sheet, settings)
+        return Preview(done, done.section, ())
+    except BadSheet as bad:
+        faults = bad.faults
+    sheet, columns = faultless_part(sheet, lay_out(sheet, settings), faults)
+    section = whole_section(columns, flowing_depth_m(columns))
+    result = _computed(sheet, columns, settings) if (columns.method >= 0).any() else None
+    return Preview(result, section, faults)
+
+
+def _computed(sheet: Sheet, columns: Columns, settings: GaugingSettings) -> Gauging:
+    measured = measure(sheet, columns, settings)
+    section = whole_section(columns, measured.depth_m)
+    flows = channel_flows(measured)
+    mid = np.concatenate([f.panels.mid.flow_m3s for f in flows])
+    mean = np.concatenate([f.panels.mean.flow_m3s for f in flows])
+    rows = np.concatenate([f.rows for f in flows])
+    mid_m3s, mean_m3s = float(mid.sum()), float(mean.sum())
+    by_mid = settings.method == DischargeMethod.MID_SECTION
+    stage = _stage(sheet, columns.time_s[rows], mid, settings)
+    totals = Totals(
+        mid_m3s=mid_m3s,
+        mean_m3s=mean_m3s,
+        width_m=section.width_m,
+        columns=columns,
+        verticals=len(rows),
+        panel_flow_m3s=mid if by_mid else mean,
+        panel_vertical=rows if by_mid else np.concatenate([f.zone_rows for f in flows]),
+    )
+    uncertainty = _uncertainty(
+        measured,
+        sheet.meter,
+        rows=rows,
+        mid_m3s=mid,
+        discharge_m3s=mid_m3s if by_mid else mean_m3s,
+        width_m=section.width_m,
+        settings=settings,
+    )
+    return Gauging(
+        method=DischargeMethod(settings.method),
+        mid_section_m3s=mid_m3s,
+        mean_section_m3s=mean_m3s,
+        section=section,
+        uncertainty=uncertainty,
+        stage=stage,
+        mid_panels=panels_of(columns, flows, total_m3s=mid_m3s, mid=True),
+        mean_panels=panels_of(columns, flows, total_m3s=mean_m3s, mid=False),
+        verticals=verticals_of(measured),
+        findings=(
+            *of_whole(sheet, totals, stage=stage, settings=settings),
+            *of_verticals(measured, meter=sheet.meter, wading=sheet.wading, settings=settings),
+        ),
+    )
+
+
+def _uncertainty(
+    m: Measured,
+    meter: Meter | None,
+    *,
+    rows: Indices,
+    mid_m3s: Floats,
+    discharge_m3s: float,
+    width_m: float,
+    settings: GaugingSettings,
+) -> Uncertainty:
+    c, method = m.columns, m.columns.method[rows]
+    under_ice = c.ice_m[rows] > 0
+    count = np.bincount(c.point_vertical, minlength=len(c.method))[rows]
+    seconds = np.where(np.isnan(c.seconds), settings.unstated_exposure_s, c.seconds)
+    speed = m.point_velocity_ms
+    if meter is not None and meter.standard_uncertainty_percent is not None:
+        u_c = np.full(len(speed), meter.standard_uncertainty_percent)
+    else:
+        single = meter is not None and meter.calibrated_singly
+        u_c = tables.meter_percent(speed, calibrated_singly=single)
+    u_e = tables.exposure_percent(speed, seconds, c.fraction)
+
+    def per_vertical(u: Floats) -> Floats:
+        # √(mean of u² over the points / n)
+        total = np.bincount(c.point_vertical, weights=u**2, minlength=len(c.method))[rows]
+        return np.sqrt(total) / count
+
+    random = np.array(
+        [
+            np.full(len(rows), tables.width_percent(width_m)),
+            tables.depth_percent(m.depth_m[rows], settings.shallow_depth_percent),
+            tables.points_percent(method, under_ice, settings),
+            per_vertical(u_c),
+            per_vertical(u_e),
+        ]
+    )
+    return tables.combine(
+        mid_m3s,
+        discharge_m3s=discharge_m3s,
+        verticals_percent=tables.verticals_percent(len(rows)),
+        systematic_percent=settings.systematic_percent,
+        random_percent=random,
+        agency_values=tables.agency_values(
+            m.depth_m[rows], method, under_ice=under_ice, seconds=c.seconds
+        ),
+    )
+
+
+def _stage(
+    sheet: Sheet, vertical_s: Floats, flow_m3s: Floats, settings: GaugingSettings
+) -> MeanStage | None:
+    if not sheet.stages:
+        return None
+    whole = sheet.started_s is not None and sheet.ended_s is not None
+    return mean_stage(
+        np.array([s.time_s for s in sheet.stages], dtype=np.float64),
+        np.array([s.stage_m for s in sheet.stages], dtype=np.float64),
+        vertical_s=vertical_s,
+        flow_m3s=flow_m3s,
+        period_s=(float(sheet.started_s or 0), float(sheet.ended_s or 0)) if whole else None,
+        limit_m=settings.stage_change_m,
+    )

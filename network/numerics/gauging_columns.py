@@ -1,0 +1,143 @@
+"""A gauging sheet laid out in columns, so that it can be checked and computed as arrays."""
+
+from collections.abc import Mapping
+from dataclasses import dataclass, replace
+
+import numpy as np
+
+from network.numerics.arrays import Bools, Floats, Indices
+from network.numerics.gauging_input import Bank, GaugingSettings, Sheet, Vertical
+from network.numerics.verticals import Method, point_method
+
+UNKNOWN_SET = -2  # points that make no method
+NO_WEIGHTS: Mapping[float | None, float] = {}
+
+
+@dataclass(frozen=True, eq=False)
+class Columns:
+    """All verticals of all channels in order, all points in order, two banks a channel.
+
+    Blank cells are not a number. used: the verticals that take part (all of a faultless sheet).
+    A mean velocity given directly stands as one point of its vertical.
+    """
+
+    channel: Indices
+    first_of_channel: Indices  # with the number of verticals at the end
+    distance_m: Floats
+    depth_m: Floats
+    angle_deg: Floats
+    ice_m: Floats
+    line_angle_deg: Floats
+    air_line_m: Floats
+    time_s: Floats
+    method: Indices
+    used: Bools
+    point_vertical: Indices
+    fraction: Floats
+    point_velocity_ms: Floats
+    revolutions: Floats
+    seconds: Floats
+    weight: Floats
+    bank_distance_m: Floats  # [channels, 2]
+    bank_depth_m: Floats
+    bank_velocity_ms: Floats
+    bank_factor: Floats
+
+    def of_channel(self, channel: int) -> slice:
+        """Give the places of a channel's verticals."""
+        return slice(*self.first_of_channel[channel : channel + 2].tolist())
+
+    def place(self, vertical: int) -> tuple[int, int]:
+        """Give the channel of a vertical and its place in it, from 0."""
+        channel = int(self.channel[vertical])
+        return channel, vertical - int(self.first_of_channel[channel])
+
+    def point_place(self, point: int) -> int:
+        """Give the place of a point within its vertical, from 0."""
+        vertical = self.point_vertical[point]
+        return point - int(np.searchsorted(self.point_vertical, vertical))
+
+    def without(self, *, verticals: Bools, velocities: Bools) -> "Columns":
+        """Leave out some verticals, and turn others into soundings."""
+        points = ~(verticals | velocities)[self.point_vertical]
+        kept = {
+            name: getattr(self, name)[points]
+            for name in (
+                *("point_vertical", "fraction", "point_velocity_ms"),
+                *("revolutions", "seconds", "weight"),
+            )
+        }
+        method = np.where(verticals | velocities, Method.SOUNDING, self.method)
+        return replace(self, used=self.used & ~verticals, method=method, **kept)
+
+
+def lay_out(sheet: Sheet, settings: GaugingSettings) -> Columns:
+    """Lay a sheet out in columns; nothing is checked, an unknown set of points is marked."""
+    verticals = [v for c in sheet.channels for v in c.verticals]
+    counts = [len(c.verticals) for c in sheet.channels]
+    rows = np.array([_row(v) for v in verticals], dtype=np.float64).reshape(-1, 7).T
+    method, weight, points = _points(verticals)
+    cells = np.array(points, dtype=np.float64).reshape(-1, 5).T
+    banks = [[_bank(b, settings) for b in (c.first_bank, c.last_bank)] for c in sheet.channels]
+    bank = np.array(banks, dtype=np.float64).reshape(-1, 2, 4)
+    first = np.zeros(len(counts) + 1, dtype=np.intp)
+    first[1:] = np.cumsum(counts)
+    return Columns(
+        channel=np.repeat(np.arange(len(counts)), counts),
+        first_of_channel=first,
+        distance_m=rows[0],
+        depth_m=rows[1],
+        angle_deg=rows[2],
+        ice_m=rows[3],
+        line_angle_deg=rows[4],
+        air_line_m=rows[5],
+        time_s=rows[6],
+        method=np.array(method, dtype=np.intp),
+        used=np.ones(len(verticals), dtype=np.bool_),
+        point_vertical=cells[0].astype(np.intp),
+        fraction=cells[1],
+        point_velocity_ms=cells[2],
+        revolutions=cells[3],
+        seconds=cells[4],
+        weight=np.array(weight, dtype=np.float64),
+        bank_distance_m=bank[:, :, 0],
+        bank_depth_m=bank[:, :, 1],
+        bank_velocity_ms=bank[:, :, 2],
+        bank_factor=bank[:, :, 3],
+    )
+
+
+def _row(v: Vertical) -> tuple[float | None, ...]:
+    return (
+        *(v.distance_m, v.depth_m, v.angle_deg, v.ice_underside_m),
+        *(v.line_angle_deg, v.air_line_m, v.time_s),
+    )
+
+
+def _bank(bank: Bank, settings: GaugingSettings) -> tuple[float | None, ...]:
+    factor = settings.edge_factors[bank.edge] if bank.factor is None else bank.factor
+    return (bank.distance_m, bank.depth_m, bank.velocity_ms, factor)
+
+
+def _points(
+    verticals: list[Vertical],
+) -> tuple[list[int], list[float], list[tuple[float | None, ...]]]:
+    methods: list[int] = []
+    weights: list[float] = []
+    points: list[tuple[float | None, ...]] = []
+    for i, vertical in enumerate(verticals):
+        if vertical.points:
+            found = point_method([p.fraction for p in vertical.points])
+            known = found is not None and len(found.weights) == len(vertical.points)
+            methods.append(found.method if found and known else UNKNOWN_SET)
+            weight = found.weights if found else NO_WEIGHTS
+            for p in vertical.points:
+                weights.append(weight.get(p.fraction, 0.0))
+                points.append((i, p.fraction, p.velocity_ms, p.revolutions, p.seconds))
+        elif vertical.mean_velocity_ms is not None:
+            methods.append(Method.GIVEN)
+            weights.append(1.0)
+            points.append((i, 0.6, vertical.mean_velocity_ms, None, None))
+        else:
+            methods.append(Method.SOUNDING)
+    return methods, weights, points
