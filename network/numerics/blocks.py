@@ -30,7 +30,7 @@ def encode(readings: Readings) -> bytes:
     """Pack readings into bytes, in whole millimetres or, where they need it, tenths.
 
     Finer digits are rounded away. Raises ReadingsError for values beyond ±100 km or a step of more
-    than 136 years. Method: own, see DEVELOPERS.md; zig-zag differences before byte planes halve it.
+    than 136 years. Method: own; zig-zag before the byte planes halves the size.
     """
     units, decimals = _whole_units(readings.values_m)
     steps_s = np.diff(readings.times_s)
@@ -126,7 +126,9 @@ def _open(block: memoryview) -> _Opened:
     if checksum != _checksum(HEADER.pack(*head, 0), body):
         raise BlockError("The block of readings is damaged: its checksum does not agree.")
     if version != VERSION:
-        raise BlockError(f"The block of readings has version {version}; this program reads 1.")
+        raise BlockError(
+            f"The block of readings has version {version}; this program reads {VERSION}."
+        )
     unpacked, at, arrays = zlib.decompress(body), 0, []
     for _ in range(5):
         array, at = _unpack(unpacked, at)

@@ -10,7 +10,8 @@ from network.numerics.marks import Mark
 from network.numerics.pieces import Lines, Powers
 from network.numerics.sentences import Refused, gettext_noop, sentence
 
-CHUNK = 8192  # stages worked on at a time, so that the arrays between stay in the cache
+SLACK_M = 1e-6  # a stage at the end of a range is inside, whatever the rounding of its sum
+CHUNK = 16384  # stages worked on at a time, so that the arrays between stay in the cache
 
 
 @dataclass(frozen=True)
@@ -160,7 +161,7 @@ def flow(curve: Curve, stage_m: Floats) -> tuple[Floats, MarkBits]:
 
 def rate_into(curve: Curve, stage_m: Floats, *, flow_m3s: Floats, marks: MarkBits) -> None:
     """Do what flow() does, into arrays given; marks are added to those there."""
-    (low, high), (sure_low, sure_high) = curve.allowed_m, curve.unmarked_m
+    (low, high), (sure_low, sure_high) = map(_widened, (curve.allowed_m, curve.unmarked_m))
     for start in range(0, len(stage_m), CHUNK):
         part = np.ascontiguousarray(stage_m[start : start + CHUNK])
         flow_part = flow_m3s[start : start + CHUNK]
@@ -179,13 +180,10 @@ def stage_for(curve: Curve, flow_m3s: Floats) -> Floats:
     use with its allowed extrapolation. For zero flow it is the cease-to-flow stage.
     Where two segments overlap at their joint, the stage of the upper one is given.
     """
-    low, high = curve.allowed_m
-    possible = np.where(flow_m3s >= 0, flow_m3s, np.nan)
-    stage_m = curve.stage_at(possible)
-    # The outermost flows come back within rounding of the outermost stages.
-    slack_m = 1e-9
-    inside = (stage_m >= low - slack_m) & (stage_m <= high + slack_m)
-    return np.where(inside, np.clip(stage_m, low, high), np.nan)
+    low, high = _widened(curve.allowed_m)
+    stage_m = curve.stage_at(np.where(flow_m3s >= 0, flow_m3s, np.nan))
+    inside = (stage_m >= low) & (stage_m <= high)
+    return np.where(inside, np.clip(stage_m, *curve.allowed_m), np.nan)
 
 
 def joint_gaps(curve: SegmentCurve) -> Floats:
@@ -212,6 +210,10 @@ def zero_from_three_points(h1_m: float, h2_m: float, h3_m: float) -> float:
     )
     # h₀ = (h₁·h₃ − h₂²) / (h₁ + h₃ − 2·h₂)
     return (h1_m * h3_m - h2_m**2) / bend
+
+
+def _widened(ends_m: tuple[float, float]) -> tuple[float, float]:
+    return ends_m[0] - SLACK_M, ends_m[1] + SLACK_M
 
 
 def _power(segment: Segment, stage_m: float) -> float:

@@ -8,7 +8,7 @@ import numpy as np
 from network.numerics.arrays import Floats, Indices, MarkBits, Seconds
 from network.numerics.marks import Mark
 
-DAYS_AT_ONCE = 128  # so that the arrays between stay in the cache
+DAYS_AT_ONCE = 192  # so that the arrays between stay in the cache
 DAY_S = 86_400
 NO_TIME_S = int(np.iinfo(np.int64).min)  # numpy's NaT when seen as datetime64[s]
 
@@ -67,7 +67,7 @@ def daily_means(
     is NaN and MISSING; it is PARTIAL when more than gap_limit_s of it is missing. It carries the
     marks of the readings inside it. A day depends only on the readings in it and the one on either
     side, and is equal to the last bit however long the record is.
-    Source: common practice (USGS unit values to daily means; ISO/TR 24578 from memory).
+    Source: common practice; checked against published unit values and daily means (USGS).
     """
     lengths_s = np.diff(edges_s)
     day_areas, covered_s = np.zeros(len(lengths_s)), np.zeros(len(lengths_s), np.int64)
@@ -180,15 +180,15 @@ def _with_ends(
 
 def _covered(times_s: Seconds, broken: Indices, edges_s: Seconds) -> Seconds:
     """Count the seconds of each day that lie in bridged steps."""
-    broken_start_s, broken_end_s = times_s[broken], times_s[broken + 1]
-    begun = np.searchsorted(broken_start_s, edges_s)
-    lost_s = np.append(0, np.cumsum(broken_end_s - broken_start_s))[begun]
+    before_s: Seconds = np.clip(edges_s, times_s[0], times_s[-1])
     if len(broken):
+        start_s, end_s = times_s[broken], times_s[broken + 1]
+        begun = np.searchsorted(start_s, edges_s)
+        lost_s = np.append(0, np.cumsum(end_s - start_s))[begun]
         # the last step begun may end after the edge
-        beyond_s = broken_end_s[np.maximum(begun - 1, 0)] - edges_s
-        lost_s -= np.where(begun > 0, np.maximum(beyond_s, 0), 0)
-    covered_before_s: Seconds = np.clip(edges_s, times_s[0], times_s[-1]) - lost_s
-    return np.diff(covered_before_s)
+        beyond_s = np.maximum(end_s[np.maximum(begun - 1, 0)] - edges_s, 0)
+        before_s -= lost_s - np.where(begun > 0, beyond_s, 0)
+    return np.diff(before_s)
 
 
 def _marks_of_days(times_s: Seconds, marks: MarkBits, edges_s: Seconds) -> MarkBits:

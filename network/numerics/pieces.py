@@ -6,6 +6,7 @@ import numpy as np
 
 from network.numerics.arrays import Floats, Indices
 
+NO_HEAD_M = 1e-9  # less is the rounding of a sum; readings come in tenths of a millimetre
 FEW_PIECES = 6  # up to here counting comparisons is faster than a binary search
 
 
@@ -23,7 +24,8 @@ class Powers:
         piece = _piece_of(stage_m, self.bounds_m[1:])
         # Q = exp(ln C + b · ln(h − h₀)); ln 0 = −∞ gives exactly 0
         flow_m3s = stage_m - self.h0_m.take(piece, mode="clip")
-        np.maximum(flow_m3s, 0.0, out=flow_m3s)
+        if not flow_m3s.min(initial=np.inf) > NO_HEAD_M:
+            flow_m3s[flow_m3s <= NO_HEAD_M] = 0.0
         with np.errstate(divide="ignore"):
             np.log(flow_m3s, out=flow_m3s)
         flow_m3s *= self.b.take(piece, mode="clip")
@@ -56,16 +58,9 @@ class Lines:
 
 
 def _piece_of(values: Floats, bounds: Floats) -> Indices:
-    """Count the bounds at or below each value; one index for all where they lie in one piece.
-
-    The index of NaN is any.
-    """
-    ends = np.fmin.reduce(values, initial=np.inf), np.fmax.reduce(values, initial=-np.inf)
-    lowest, highest = np.searchsorted(bounds, ends, side="right")
-    if lowest >= highest:
-        return np.array([highest])
+    """Count the bounds at or below each value; for NaN any count."""
     if len(bounds) > FEW_PIECES:
-        return np.searchsorted(bounds, values, side="right")
+        return bounds.searchsorted(values, side="right")
     piece = np.zeros(len(values), np.intp)
     for bound in bounds:
         piece += values >= bound

@@ -45,6 +45,13 @@ def test_at_and_below_the_stage_of_zero_flow_the_flow_is_exactly_zero():
     assert flows(segments(), 0.0, 0.1, 0.2) == [0.0, 0.0, 0.0]
 
 
+def test_the_rounding_of_a_sum_makes_no_flow_of_none_and_loses_no_end_of_a_range():
+    assert 0.1 + 0.2 > 0.3
+    at_03 = Segment(lower_stage_m=0.3, c=4.0, h0_m=0.3, b=2.0)
+    assert flows(segments(at_03), 0.1 + 0.2) == [0.0]
+    assert flows(segments(highest_use_m=0.3), 0.1 + 0.2) == pytest.approx([0.04])
+
+
 def test_outside_the_range_of_use_there_is_no_flow_and_no_mark():
     flow_m3s, marks = flow(segments(lowest_use_m=0.3), np.array([0.1, 0.29, 0.3, 5.0, 5.01]))
     assert np.isnan(flow_m3s).tolist() == [True, True, False, False, True]
