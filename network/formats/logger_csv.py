@@ -59,7 +59,7 @@ def read(
         if layout is None and (first_row := _first_row(block)):
             layout = lay_out(profile, names_line=header, first_row=first_row)
         if layout:
-            parts.append(read_rows(block, layout))
+            parts.extend(read_rows(block, layout))
     if layout is None:
         raise FileFault(_("The file has a header but no rows."))
     if not any(len(part.times_s) or part.faults for part in parts):

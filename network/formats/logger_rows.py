@@ -27,8 +27,12 @@ from network.formats.text_encoding import TextBlock
 # No water stands higher above any zero; tenths of a millimetre up to here fit into 32 bits.
 LARGEST_M = 100_000.0
 TEXT_KEPT = 200
+# So few lines that one bad row costs little, so many that calling the parser does not count.
+PIECE_LINES = 1_000
 NUMBER = re.compile(r"[+-]?(\d+\.?\d*|\.\d+)([eE][+-]?\d+)?", re.ASCII)
 NOT_A_NUMBER = ("nan", "+nan", "-nan", "inf", "+inf", "-inf", "infinity", "+infinity", "-infinity")
+
+Columns = tuple[npt.NDArray[np.int64], npt.NDArray[np.float64]]
 
 
 @dataclass(frozen=True, slots=True)
@@ -43,18 +47,35 @@ class Rows:
     rows_missing: int
 
 
-def read_rows(block: TextBlock, layout: Layout) -> Rows:
-    """Read one block by the C parser; what it does not take is read again line by line."""
+def read_rows(block: TextBlock, layout: Layout) -> Iterator[Rows]:
+    """Read one block by the C parser, smaller pieces where it stumbles, and those line by line."""
     columns = _columns(block, layout)
-    if columns is None:
-        return _line_by_line(_lines(block), layout)
+    if columns is not None:
+        yield _checked(columns, block=block, layout=layout)
+    elif block.line_count <= PIECE_LINES:
+        yield _line_by_line(_lines(block, range(block.line_count)), layout)
+    else:
+        for piece in _pieces(block):
+            yield from read_rows(piece, layout)
+
+
+def _pieces(block: TextBlock) -> Iterator[TextBlock]:
+    lines = block.data.split(b"\n")[: block.line_count]
+    size = -(-block.line_count // 8)
+    for start in range(0, block.line_count, size):
+        some = lines[start : start + size]
+        yield TextBlock(b"\n".join(some) + b"\n", block.first_line + start, len(some))
+
+
+def _checked(columns: Columns, *, block: TextBlock, layout: Layout) -> Rows:
+    """Keep the rows that make sense and read the others again one by one."""
     times_s, values_m = columns
     good = _plausible(times_s, layout) & (np.abs(values_m) < LARGEST_M)
     if good.all():
         # A range, not an array: new memory is what costs most here.
         lines = range(block.first_line, block.first_line + block.line_count)
         return Rows(times_s, values_m, lines, (), block.line_count, 0)
-    odd = _line_by_line(compress(_lines(block), ~good), layout)
+    odd = _line_by_line(_lines(block, np.flatnonzero(~good).tolist()), layout)
     numbers = np.concatenate([block.first_line + np.flatnonzero(good), odd.lines])
     order = np.argsort(numbers)
     return Rows(
@@ -67,9 +88,7 @@ def read_rows(block: TextBlock, layout: Layout) -> Rows:
     )
 
 
-def _columns(
-    block: TextBlock, layout: Layout
-) -> tuple[npt.NDArray[np.int64], npt.NDArray[np.float64]] | None:
+def _columns(block: TextBlock, layout: Layout) -> Columns | None:
     """Read times and values of all lines at once; None where the parser stumbles or might err.
 
     NO_TIME and NaN mark rows to look at again.
@@ -138,6 +157,9 @@ def _parse(data: bytes, layout: Layout) -> pd.DataFrame:
 def _time_column(frame: pd.DataFrame, layout: Layout) -> pd.Series:
     columns = [frame[str(index)] for index in layout.time_indices]
     if len(columns) == 1:
+        # A column with one text that is no time stays text; pandas would later guess its format.
+        if not pd.api.types.is_datetime64_any_dtype(columns[0]):
+            raise ValueError("not a column of times")
         return columns[0]
     return pd.to_datetime(columns[0] + " " + columns[1], format=pandas_format(layout.profile))
 
@@ -172,10 +194,11 @@ def _line_by_line(numbered: Iterable[tuple[int, str]], layout: Layout) -> Rows:
     )
 
 
-def _lines(block: TextBlock) -> Iterator[tuple[int, str]]:
-    """Yield number and text of each line."""
-    for number, line in enumerate(io.BytesIO(block.data), block.first_line):
-        yield number, line.decode().rstrip("\r\n")
+def _lines(block: TextBlock, indices: Iterable[int]) -> Iterator[tuple[int, str]]:
+    """Yield number and text of the lines at those places in the block."""
+    lines = block.data.split(b"\n")
+    for index in indices:
+        yield block.first_line + index, lines[index].decode().rstrip("\r")
 
 
 def _implausible(text: str, profile: Profile) -> Sentence:

@@ -95,6 +95,7 @@ GOOD = "".join(f"2018-11-04 00:{minute:02},1.5\n" for minute in range(10))
         ("2018-11-04 00:30,1,25", "the row has 3 columns, the first one 2"),
         ("2018-11-04 00:3", "the row has only 1 columns"),
         ("2018-11-31 00:30,1.5", "“2018-11-31 00:30” is no time in the format ISO"),
+        ("04/11/2018 00:30,1.5", "“04/11/2018 00:30” is no time in the format ISO"),
         ("now,1.5", "“now” is no time in the format ISO"),
         (",1.5", "the time is empty"),
         ("NaT,1.5", "“NaT” is no time in the format ISO"),
@@ -112,11 +113,26 @@ def test_a_row_that_cannot_be_read_is_named_and_the_others_kept(row, reason):
     assert file.rows_read == 12
 
 
+def test_a_bad_row_deep_in_a_file_has_its_own_line_number():
+    rows = [f"2018-11-{day:02} {hour:02}:{minute:02},1" for day in range(1, 15)
+            for hour in range(24) for minute in range(60)]  # fmt: skip
+    rows[12_345] += "x"
+    file = read_text(HEAD + "\n".join(rows))
+    assert [(fault.line, fault.text) for fault in file.faults] == [(12_347, rows[12_345])]
+    assert len(file.times_s) == len(rows) - 1
+    assert set(np.diff(file.times_s).tolist()) == {60, 120}
+
+
 def test_a_reason_can_be_translated():
     (fault,) = read_text(HEAD + GOOD + "2018-11-04 00:30,ERR\n").faults
     assert fault.reason.template % fault.reason.values == fault.reason
     assert fault.reason.values == {"text": "ERR"}
     assert str(fault) == "line 12: the value “ERR” cannot be read as a number"
+
+
+def test_a_format_is_never_guessed():
+    with pytest.raises(FileFault, match="no time in the format ISO"):
+        read_text(HEAD + "01/02/2018 00:00,1\n01/02/2018 00:15,1\n")
 
 
 def test_of_two_rows_of_one_time_the_later_counts_and_the_earlier_is_named():
