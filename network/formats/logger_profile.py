@@ -1,6 +1,7 @@
 """How to read one kind of logger file: columns, clock, unit and signs."""
 
 import csv
+import datetime as dt
 from contextlib import suppress
 from dataclasses import dataclass
 from functools import cached_property
@@ -62,6 +63,20 @@ class Profile:
         if self.value_column in self.time_columns:
             raise FileFault(_("Time and value cannot stand in the same column."))
         self._check_clock()
+        self._check_time_format()
+
+    def _check_time_format(self) -> None:
+        if self.time_format == "ISO":
+            return
+        sample = dt.datetime(2019, 11, 23, tzinfo=dt.UTC)
+        try:
+            back = dt.datetime.strptime(sample.strftime(self.time_format), self.time_format)
+        except ValueError:
+            back = dt.datetime.min
+        if back.date() != sample.date():
+            raise FileFault(
+                _("“%(format)s” is no format of a date and time.", format=self.time_format)
+            )
 
     def _check_clock(self) -> None:
         if isinstance(self.clock, str):

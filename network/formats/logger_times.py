@@ -29,8 +29,10 @@ def parse_times(texts: list[str], profile: Profile) -> npt.NDArray[np.int64]:
     Fractions of a second are dropped.
     """
     series = pd.Series(texts, dtype=object)
-    has_offset = OWN_OFFSET.match if "%z" not in profile.time_format else bool
-    own = np.array([bool(has_offset(text)) for text in texts], np.bool_)
+    if profile.time_format == "ISO":
+        own = np.array([bool(OWN_OFFSET.match(text)) for text in texts], np.bool_)
+    else:
+        own = np.full(len(texts), "%z" in profile.time_format)
     series[series.str.strip().str.lower().isin(CLOCK_WORDS)] = ""
     times_s = np.full(len(series), NO_TIME)
     for mask, aware in ((own, True), (~own, False)):

@@ -224,6 +224,8 @@ def test_a_file_that_is_no_logger_file_is_refused_with_a_sentence(data, profile,
         ({"value_column": 1}, "Time and value cannot stand in the same column"),
         ({"clock": "Nowhere/Town"}, "The civil zone “Nowhere/Town” is not known"),
         ({"clock": 900}, "within 14 hours"),
+        ({"time_format": "%H:%M"}, "“%H:%M” is no format of a date and time"),
+        ({"time_format": "%d.%m.%Y %Q"}, "is no format of a date and time"),
     ],
 )
 def test_a_profile_that_contradicts_itself_is_refused(profile, sentence):

@@ -76,6 +76,13 @@ def test_a_format_with_an_offset_needs_no_clock():
     assert file.times_s.tolist() == [1_541_309_400, 1_541_313_000]
 
 
+def test_a_dash_before_the_minutes_is_no_offset():
+    rows = ["04.11.2018 01-15,1", "04.11.2018 01-30,1", "04.11.2018 01-45,1", "x,1"]
+    file = read_rows(rows, header_lines=0, time_format="%d.%m.%Y %H-%M", clock=60)
+    # 2018-11-04 00:15 UTC, by `date -u -d '2018-11-04 00:15' +%s`
+    assert file.times_s.tolist() == [1_541_290_500, 1_541_291_400, 1_541_292_300]
+
+
 def test_fractions_of_a_second_are_dropped():
     file = read_rows(["1969-12-31 23:59:59.75,1", "1970-01-01 00:00:00.25,1"], header_lines=0)
     assert file.times_s.tolist() == [-1, 0]
