@@ -7,7 +7,7 @@ import numpy as np
 
 from network.numerics.arrays import Bools, Floats, Seconds
 from network.numerics.rating import RatingPeriod, ShiftTable
-from network.numerics.synthetic import STEP_S, stream
+from network.numerics.synthetic import stream
 
 
 @dataclass(frozen=True)
@@ -114,8 +114,3 @@ def raw_values(stage_m: Floats, *, scale: float, offset_m: float, resolution: fl
         raise ValueError("scale must not be nil")
     raw: Floats = np.rint((stage_m - offset_m) / scale / resolution) * resolution
     return raw
-
-
-def grid(start_s: int, end_s: int) -> Seconds:
-    """Return the 15-minute instants from the first at or after `start_s` to before `end_s`."""
-    return np.arange(-(-start_s // STEP_S) * STEP_S, end_s, STEP_S, dtype=np.int64)

@@ -37,7 +37,10 @@ class PlateReading:
 
 @dataclass(frozen=True)
 class RecorderCheck:
-    """Stage by the recorder as found and as left beside the staff's (m above station zero)."""
+    """Stage by the recorder as found and as left beside the staff's (m above station zero).
+
+    All three are for the instant `at`; the staff's is missing where no plate could be read.
+    """
 
     at: datetime
     series: str
@@ -95,14 +98,15 @@ def make_visits(truth: Truth) -> tuple[MadeVisit, ...]:
 def _visit(truth: Truth, *, arrived: datetime, story: VisitStory) -> MadeVisit:
     departed = arrived + timedelta(minutes=truth.station.visits.minutes)
     rng = stream(truth.seed, f"{truth.station.station.code} visit {seconds(arrived)}")
-    last = departed - timedelta(minutes=5)
-    read = () if story.frozen or story.dry else (arrived + timedelta(minutes=5), last)
+    times = (arrived + timedelta(minutes=5), departed - timedelta(minutes=5))
+    read = () if story.frozen or story.dry else times
+    readings = tuple(row for at in read for row in _readings(truth, at=at, rng=rng))
     return MadeVisit(
         arrived=arrived,
         departed=departed,
         party=truth.station.visits.party,
-        readings=tuple(row for at in read for row in _readings(truth, at=at, rng=rng)),
-        check=_check(truth, arrived=arrived, left=last, frozen=story.frozen, rng=rng),
+        readings=readings,
+        check=_check(truth, times=times, readings=readings, rng=rng),
         story=story,
     )
 
@@ -111,10 +115,10 @@ def _readings(truth: Truth, *, at: datetime, rng: np.random.Generator) -> list[P
     """Read every plate that the water stands on, two where they overlap."""
     stage_m = truth.stage_at(at)
     rows = []
-    for plate in truth.station.plates:
+    for plate in (plate for plate in truth.station.plates if stands(plate, at)):
         reading_m = stage_m - plate_zero_m(plate, at) + float(rng.normal(0.0, 0.002))
         reading_m = round(round(reading_m / READ_TO_M) * READ_TO_M, 3)
-        if stands(plate, at) and plate.lowest_m <= reading_m <= plate.highest_m:
+        if plate.lowest_m <= reading_m <= plate.highest_m:
             rows.append(PlateReading(at, plate.label, reading_m, wave_m=0.005))
     return rows
 
@@ -125,24 +129,32 @@ def stands(plate: Plate, at: datetime) -> bool:
 
 
 def plate_zero_m(plate: Plate, at: datetime) -> float:
-    """Return the plate zero in force (m above station zero), the first before its chain."""
-    begun = [row for row in plate.zeros if row.effective_from <= at]
-    return (begun or plate.zeros)[-1 if begun else 0].zero_m
+    """Return the plate zero in force (m above station zero); the plate stands at that instant."""
+    return [row.zero_m for row in plate.zeros if row.effective_from <= at][-1]
 
 
 def _check(
-    truth: Truth, *, arrived: datetime, left: datetime, frozen: bool, rng: np.random.Generator
+    truth: Truth,
+    *,
+    times: tuple[datetime, datetime],
+    readings: tuple[PlateReading, ...],
+    rng: np.random.Generator,
 ) -> RecorderCheck:
-    at = arrived + timedelta(minutes=10)
+    """Compare the recorder with the first plate read; what stood wrong is mended by the end."""
     series = primary(truth.station)
-    times_s = np.array([seconds(at), seconds(left)], dtype=np.int64)
-    found_m, left_m = truth.stage_at(at) + recorded_error(truth, series, time_s=times_s)
+    times_s = np.array([seconds(at) for at in times], dtype=np.int64)
+    noise_m = rng.normal(0.0, truth.station.flow.noise_m, 2)
+    shown_m = truth.stage_at(times[0]) + noise_m + recorded_error(truth, series, time_s=times_s)
+    zeros_m = {
+        p.label: plate_zero_m(p, times[0]) for p in truth.station.plates if stands(p, times[0])
+    }
+    staff_m = [row.reading_m + zeros_m[row.plate] for row in readings[:1]]
     return RecorderCheck(
-        at=at,
+        at=times[0],
         series=series.label,
-        found_m=round(float(found_m), 3),
-        left_m=round(float(left_m), 3),
-        staff_m=None if frozen else round(truth.stage_at(at), 3),
+        found_m=round(float(shown_m[0]), 3),
+        left_m=round(float(shown_m[1]), 3),
+        staff_m=round(staff_m[0], 3) if staff_m else None,
         clock_error_s=int(rng.integers(-40, 75)),
         battery_v=round(float(rng.normal(12.5, 0.25)), 1),
     )

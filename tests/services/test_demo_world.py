@@ -182,8 +182,10 @@ def test_plate_readings_and_plate_zeros_give_the_stage(truths):
 def test_recorder_checks_find_the_fault_and_leave_it_mended(truths):
     visits = {v.arrived.date().isoformat(): v for v in make_visits(truths["VE-030"])}
     check = visits["2024-07-09"].check
-    assert check.found_m - check.staff_m == pytest.approx(0.034, abs=0.002)
-    assert check.left_m == pytest.approx(check.staff_m, abs=0.001)
+    # the staff is read to 5 mm with 2 mm of error, the recorder shows 1 mm of noise
+    assert check.found_m - check.staff_m == pytest.approx(0.034, abs=0.009)
+    assert check.left_m == pytest.approx(check.staff_m, abs=0.009)
+    assert check.found_m - check.left_m == pytest.approx(0.034, abs=0.004)
 
 
 @pytest.mark.parametrize("code", [c for c in RATED if c != "TO-010"])
