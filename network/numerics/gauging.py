@@ -60,21 +60,18 @@ def _computed(sheet: Sheet, columns: Columns, settings: GaugingSettings) -> Gaug
     mid_m3s, mean_m3s = float(mid.sum()), float(mean.sum())
     by_mid = settings.method == DischargeMethod.MID_SECTION
     stage = _stage(sheet, columns.time_s[rows], mid, settings)
-    totals = Totals(
-        mid_m3s=mid_m3s,
-        mean_m3s=mean_m3s,
-        width_m=section.width_m,
-        columns=columns,
-        verticals=len(rows),
-        panel_flow_m3s=mid if by_mid else mean,
-        panel_vertical=rows if by_mid else np.concatenate([f.zone_rows for f in flows]),
-    )
+    mid_panels = panels_of(columns, flows, total_m3s=mid_m3s, mid=True)
+    mean_panels = panels_of(columns, flows, total_m3s=mean_m3s, mid=False)
+    panels = mid_panels if by_mid else mean_panels
+    totals = Totals(mid_m3s, mean_m3s, section.width_m, len(rows), panels)
+    meter = sheet.meter
+    # Mid-section shares of the result, whichever method gives it.
+    shares_m3s = mid if by_mid or not mid_m3s else mid * (mean_m3s / mid_m3s)
     uncertainty = _uncertainty(
         measured,
-        sheet.meter,
+        meter,
         rows=rows,
-        mid_m3s=mid,
-        discharge_m3s=mid_m3s if by_mid else mean_m3s,
+        flow_m3s=shares_m3s,
         width_m=section.width_m,
         settings=settings,
     )
@@ -85,12 +82,12 @@ def _computed(sheet: Sheet, columns: Columns, settings: GaugingSettings) -> Gaug
         section=section,
         uncertainty=uncertainty,
         stage=stage,
-        mid_panels=panels_of(columns, flows, total_m3s=mid_m3s, mid=True),
-        mean_panels=panels_of(columns, flows, total_m3s=mean_m3s, mid=False),
+        mid_panels=mid_panels,
+        mean_panels=mean_panels,
         verticals=verticals_of(measured),
         findings=(
-            *of_whole(sheet, totals, stage=stage, settings=settings),
-            *of_verticals(measured, meter=sheet.meter, wading=sheet.wading, settings=settings),
+            *of_whole(totals, meter=meter, stage=stage, settings=settings),
+            *of_verticals(measured, meter=meter, wading=sheet.wading, settings=settings),
         ),
     )
 
@@ -100,47 +97,49 @@ def _uncertainty(
     meter: Meter | None,
     *,
     rows: Indices,
-    mid_m3s: Floats,
-    discharge_m3s: float,
+    flow_m3s: Floats,
     width_m: float,
     settings: GaugingSettings,
 ) -> Uncertainty:
-    c, method = m.columns, m.columns.method[rows]
+    c, method, depth_m = m.columns, m.columns.method[rows], m.depth_m[rows]
     under_ice = c.ice_m[rows] > 0
-    count = np.bincount(c.point_vertical, minlength=len(c.method))[rows]
-    seconds = np.where(np.isnan(c.seconds), settings.unstated_exposure_s, c.seconds)
-    speed = m.point_velocity_ms
-    if meter is not None and meter.standard_uncertainty_percent is not None:
-        u_c = np.full(len(speed), meter.standard_uncertainty_percent)
-    else:
-        single = meter is not None and meter.calibrated_singly
-        u_c = tables.meter_percent(speed, calibrated_singly=single)
-    u_e = tables.exposure_percent(speed, seconds, c.fraction)
-
-    def per_vertical(u: Floats) -> Floats:
-        # √(mean of u² over the points / n)
-        total = np.bincount(c.point_vertical, weights=u**2, minlength=len(c.method))[rows]
-        return np.sqrt(total) / count
-
-    random = np.array(
-        [
-            np.full(len(rows), tables.width_percent(width_m)),
-            tables.depth_percent(m.depth_m[rows], settings.shallow_depth_percent),
-            tables.points_percent(method, under_ice, settings),
-            per_vertical(u_c),
-            per_vertical(u_e),
-        ]
-    )
+    u_c, u_e = (_of_points(c, u)[rows] for u in _point_percent(m, meter, settings))
     return tables.combine(
-        mid_m3s,
-        discharge_m3s=discharge_m3s,
+        flow_m3s,
         verticals_percent=tables.verticals_percent(len(rows)),
         systematic_percent=settings.systematic_percent,
-        random_percent=random,
-        agency_values=tables.agency_values(
-            m.depth_m[rows], method, under_ice=under_ice, seconds=c.seconds
+        random_percent=np.array(
+            [
+                np.full(len(rows), tables.width_percent(width_m)),
+                tables.depth_percent(depth_m, settings.shallow_depth_percent),
+                tables.points_percent(method, under_ice, settings),
+                u_c,
+                u_e,
+            ]
         ),
+        agency_values=tables.agency_values(depth_m, method, under_ice=under_ice, seconds=c.seconds),
     )
+
+
+def _point_percent(
+    m: Measured, meter: Meter | None, settings: GaugingSettings
+) -> tuple[Floats, Floats]:
+    """Give u_c and u_e of every point; an unknown meter counts as one of a group rating."""
+    speed_ms, stated_s = m.point_velocity_ms, m.columns.seconds
+    seconds = np.where(np.isnan(stated_s), settings.unstated_exposure_s, stated_s)
+    if meter is not None and meter.standard_uncertainty_percent is not None:
+        u_c = np.full(len(speed_ms), meter.standard_uncertainty_percent)
+    else:
+        single = meter is not None and meter.calibrated_singly
+        u_c = tables.meter_percent(speed_ms, calibrated_singly=single)
+    return u_c, tables.exposure_percent(speed_ms, seconds, m.columns.fraction)
+
+
+def _of_points(c: Columns, u_percent: Floats) -> Floats:
+    """Give √(mean of u² / n) over the n points of every vertical, 0 in a sounding."""
+    count = np.maximum(np.bincount(c.point_vertical, minlength=len(c.method)), 1)
+    squares = np.bincount(c.point_vertical, weights=u_percent**2, minlength=len(c.method))
+    return np.asarray(np.sqrt(squares) / count, dtype=np.float64)
 
 
 def _stage(

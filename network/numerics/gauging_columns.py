@@ -2,14 +2,23 @@
 
 from collections.abc import Mapping
 from dataclasses import dataclass, replace
+from operator import attrgetter
 
 import numpy as np
 
 from network.numerics.arrays import Bools, Floats, Indices
-from network.numerics.gauging_input import Bank, GaugingSettings, Sheet, Vertical
+from network.numerics.gauging_input import Bank, GaugingSettings, Point, Sheet, Vertical
 from network.numerics.verticals import Method, point_method
 
 UNKNOWN_SET = -2  # points that make no method
+LARGEST = 1e12  # far beyond any value of a sheet, epoch seconds included
+GIVEN_TWICE = -3  # points and a mean velocity
+_SOUNDING_CELLS = attrgetter(
+    *("distance_m", "depth_m", "angle_deg", "ice_underside_m"),
+    *("line_angle_deg", "air_line_m", "time_s"),
+)
+_POINT_CELLS = attrgetter("fraction", "velocity_ms", "revolutions", "seconds")
+_FRACTION = attrgetter("fraction")
 NO_WEIGHTS: Mapping[float | None, float] = {}
 
 
@@ -72,14 +81,19 @@ class Columns:
 
 
 def lay_out(sheet: Sheet, settings: GaugingSettings) -> Columns:
-    """Lay a sheet out in columns; nothing is checked, an unknown set of points is marked."""
+    """Lay a sheet out in columns; nothing is checked, an unknown set of points is marked.
+
+    A number no river can give (beyond LARGEST) counts as a blank cell.
+    """
     verticals = [v for c in sheet.channels for v in c.verticals]
     counts = [len(c.verticals) for c in sheet.channels]
-    rows = np.array([_row(v) for v in verticals], dtype=np.float64).reshape(-1, 7).T
-    method, weight, points = _points(verticals)
-    cells = np.array(points, dtype=np.float64).reshape(-1, 5).T
+    rows = np.array([*map(_SOUNDING_CELLS, verticals)], dtype=np.float64).reshape(-1, 7).T
+    method, weight, owner, points = _points(verticals)
+    cells = np.array([*map(_POINT_CELLS, points)], dtype=np.float64).reshape(-1, 4).T
     banks = [[_bank(b, settings) for b in (c.first_bank, c.last_bank)] for c in sheet.channels]
     bank = np.array(banks, dtype=np.float64).reshape(-1, 2, 4)
+    for numbers in (rows, cells, bank[:, :, :2]):
+        numbers[np.abs(numbers) > LARGEST] = np.nan
     first = np.zeros(len(counts) + 1, dtype=np.intp)
     first[1:] = np.cumsum(counts)
     return Columns(
@@ -94,11 +108,11 @@ def lay_out(sheet: Sheet, settings: GaugingSettings) -> Columns:
         time_s=rows[6],
         method=np.array(method, dtype=np.intp),
         used=np.ones(len(verticals), dtype=np.bool_),
-        point_vertical=cells[0].astype(np.intp),
-        fraction=cells[1],
-        point_velocity_ms=cells[2],
-        revolutions=cells[3],
-        seconds=cells[4],
+        point_vertical=np.array(owner, dtype=np.intp),
+        fraction=cells[0],
+        point_velocity_ms=cells[1],
+        revolutions=cells[2],
+        seconds=cells[3],
         weight=np.array(weight, dtype=np.float64),
         bank_distance_m=bank[:, :, 0],
         bank_depth_m=bank[:, :, 1],
@@ -107,37 +121,33 @@ def lay_out(sheet: Sheet, settings: GaugingSettings) -> Columns:
     )
 
 
-def _row(v: Vertical) -> tuple[float | None, ...]:
-    return (
-        *(v.distance_m, v.depth_m, v.angle_deg, v.ice_underside_m),
-        *(v.line_angle_deg, v.air_line_m, v.time_s),
-    )
-
-
 def _bank(bank: Bank, settings: GaugingSettings) -> tuple[float | None, ...]:
     factor = settings.edge_factors[bank.edge] if bank.factor is None else bank.factor
     return (bank.distance_m, bank.depth_m, bank.velocity_ms, factor)
 
 
-def _points(
-    verticals: list[Vertical],
-) -> tuple[list[int], list[float], list[tuple[float | None, ...]]]:
+def _points(verticals: list[Vertical]) -> tuple[list[int], list[float], list[int], list[Point]]:
+    """Give the method of each vertical, and weight, vertical and cells of each point."""
     methods: list[int] = []
     weights: list[float] = []
-    points: list[tuple[float | None, ...]] = []
+    owners: list[int] = []
+    points: list[Point] = []
     for i, vertical in enumerate(verticals):
         if vertical.points:
-            found = point_method([p.fraction for p in vertical.points])
+            found = point_method(map(_FRACTION, vertical.points))
             known = found is not None and len(found.weights) == len(vertical.points)
-            methods.append(found.method if found and known else UNKNOWN_SET)
+            twice = vertical.mean_velocity_ms is not None
+            unusable = GIVEN_TWICE if twice else UNKNOWN_SET
+            methods.append(found.method if found and known and not twice else unusable)
             weight = found.weights if found else NO_WEIGHTS
-            for p in vertical.points:
-                weights.append(weight.get(p.fraction, 0.0))
-                points.append((i, p.fraction, p.velocity_ms, p.revolutions, p.seconds))
+            weights += [weight.get(p.fraction, 0.0) for p in vertical.points]
+            owners += [i] * len(vertical.points)
+            points += vertical.points
         elif vertical.mean_velocity_ms is not None:
             methods.append(Method.GIVEN)
             weights.append(1.0)
-            points.append((i, 0.6, vertical.mean_velocity_ms, None, None))
+            owners.append(i)
+            points.append(Point(0.6, vertical.mean_velocity_ms))
         else:
             methods.append(Method.SOUNDING)
-    return methods, weights, points
+    return methods, weights, owners, points

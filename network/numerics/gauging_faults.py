@@ -6,7 +6,7 @@ from dataclasses import dataclass
 import numpy as np
 
 from network.numerics.arrays import Bools, Floats
-from network.numerics.gauging_columns import UNKNOWN_SET, Columns
+from network.numerics.gauging_columns import GIVEN_TWICE, LARGEST, UNKNOWN_SET, Columns
 from network.numerics.gauging_input import Sheet
 from network.numerics.meter_rating import check_pieces
 from network.numerics.sentences import Refused, Sentence, gettext_noop, sentence
@@ -55,9 +55,9 @@ def find_faults(sheet: Sheet, columns: Columns) -> tuple[Fault, ...]:
 
 def _rows(c: Columns) -> Iterator[Fault]:
     missing = gettext_noop("Vertical {vertical}: the distance is missing.")
-    yield from _where(c, ~np.isfinite(c.distance_m), "distance_m", missing)
+    yield from _where(c, np.isnan(c.distance_m), "distance_m", missing)
     missing = gettext_noop("Vertical {vertical}: the depth is missing.")
-    yield from _where(c, ~np.isfinite(c.depth_m), "depth_m", missing)
+    yield from _where(c, np.isnan(c.depth_m), "depth_m", missing)
     negative = gettext_noop("Vertical {vertical}: the depth is negative.")
     yield from _where(c, c.depth_m < 0, "depth_m", negative)
     oblique = gettext_noop("Vertical {vertical}: the angle of the flow must lie within ±90°.")
@@ -79,8 +79,8 @@ def _rows(c: Columns) -> Iterator[Fault]:
 
 
 def _points(sheet: Sheet, c: Columns) -> Iterator[Fault]:
-    counted, timed = np.isfinite(c.revolutions), np.isfinite(c.seconds)
-    given = np.isfinite(c.point_velocity_ms)
+    counted, timed = ~np.isnan(c.revolutions), ~np.isnan(c.seconds)
+    given = ~np.isnan(c.point_velocity_ms)
     off = ~((c.fraction >= 0) & (c.fraction <= 1))
     text = gettext_noop("Vertical {vertical}: a point must lie between 0 and 1 of the depth.")
     yield from _where_point(c, off, "fraction", text)
@@ -104,6 +104,8 @@ def _points(sheet: Sheet, c: Columns) -> Iterator[Fault]:
         "0.2, 0.6 and 0.8 · surface, 0.2, 0.6, 0.8 and bed · the same with 0.4 · surface alone."
     )
     yield from _where(c, (c.method == UNKNOWN_SET) & placed, "points", text)
+    text = gettext_noop("Vertical {vertical}: both points and a mean velocity.")
+    yield from _where(c, c.method == GIVEN_TWICE, "mean_velocity_ms", text)
     text = gettext_noop("Vertical {vertical}: a surface velocity under ice gives no mean velocity.")
     yield from _where(c, (c.method == Method.SURFACE) & (c.ice_m > 0), "points", text)
 
@@ -111,12 +113,12 @@ def _points(sheet: Sheet, c: Columns) -> Iterator[Fault]:
 def _banks(c: Columns) -> Iterator[Fault]:
     rules = (
         (
-            ~np.isfinite(c.bank_distance_m),
+            np.isnan(c.bank_distance_m),
             "distance_m",
             gettext_noop("Channel {channel}: the distance of a bank is missing."),
         ),
         (
-            ~((c.bank_depth_m >= 0) & (c.bank_depth_m < np.inf)),
+            ~(c.bank_depth_m >= 0),
             "depth_m",
             gettext_noop("Channel {channel}: the depth at a bank must be 0 or more."),
         ),
@@ -126,13 +128,13 @@ def _banks(c: Columns) -> Iterator[Fault]:
             gettext_noop("Channel {channel}: the factor of an edge zone lies between 0 and 1."),
         ),
         (
-            np.isinf(c.bank_velocity_ms),
+            np.abs(c.bank_velocity_ms) > LARGEST,
             "velocity_ms",
             gettext_noop("Channel {channel}: the velocity at a bank must be a number."),
         ),
     )
     for mask, field, text in rules:
-        for channel, end in np.argwhere(mask).tolist():
+        for channel, end in zip(*(axis.tolist() for axis in mask.nonzero()), strict=True):
             yield _bank_fault(channel, end, field, sentence(text, channel=channel + 1))
 
 
@@ -142,7 +144,7 @@ def _order(c: Columns, channel: int) -> Iterator[Fault]:
     rows = [-1, *range(places.start, places.stop), -2]
     first, last = c.bank_distance_m[channel]
     x = np.array([first, *c.distance_m[places], last])
-    there = np.isfinite(x)
+    there = ~np.isnan(x)
     rows, x = [r for r, t in zip(rows, there, strict=True) if t], x[there]
     steps = np.diff(x)
     if len(x) < 2:
@@ -191,7 +193,7 @@ def _whole(sheet: Sheet, c: Columns) -> Iterator[Fault]:
         if not (c.method[c.of_channel(channel)] != Method.SOUNDING).any():
             text = gettext_noop("Channel {channel}: no vertical has a velocity.")
             yield Fault("verticals", sentence(text, channel=channel + 1), channel)
-    if not np.isfinite([s.stage_m for s in sheet.stages]).all():
+    if not all(abs(s.stage_m) <= LARGEST for s in sheet.stages):
         yield Fault("stages", sentence(gettext_noop("A stage reading is no number.")))
     if sheet.started_s is not None and (sheet.ended_s or sheet.started_s) < sheet.started_s:
         yield Fault("ended_s", sentence(gettext_noop("The gauging ends before it starts.")))
@@ -200,20 +202,6 @@ def _whole(sheet: Sheet, c: Columns) -> Iterator[Fault]:
             check_pieces(sheet.meter.pieces)
         except Refused as refused:
             yield Fault("meter", refused.sentence)
-    if any(
-        v.points and v.mean_velocity_ms is not None for h in sheet.channels for v in h.verticals
-    ):
-        yield from _twice(sheet)
-
-
-def _twice(sheet: Sheet) -> Iterator[Fault]:
-    number = 0
-    for i, channel in enumerate(sheet.channels):
-        for j, vertical in enumerate(channel.verticals):
-            number += 1
-            if vertical.points and vertical.mean_velocity_ms is not None:
-                text = gettext_noop("Vertical {vertical}: both points and a mean velocity.")
-                yield Fault("mean_velocity_ms", sentence(text, vertical=number), i, j)
 
 
 def _bank_fault(channel: int, end: int, field: str, said: Sentence) -> Fault:

@@ -1,14 +1,13 @@
 """What a hydrographer would ask about a gauging as a whole, each with limit and source."""
 
 from bisect import bisect_right
-from collections.abc import Iterator
+from collections.abc import Iterator, Sequence
 from dataclasses import dataclass
 
 import numpy as np
 
-from network.numerics.arrays import Floats, Indices
-from network.numerics.gauging_columns import Columns
-from network.numerics.gauging_input import GaugingSettings, Meter, Sheet
+from network.numerics.gauging_input import GaugingSettings, Meter
+from network.numerics.gauging_result import Panel
 from network.numerics.mean_stage import MeanStage
 from network.numerics.sentences import gettext_noop, sentence
 from network.numerics.vertical_findings import Finding
@@ -27,32 +26,27 @@ WIDTHS_M = (0.5, 1.0, 3.0, 5.0)
 FEWEST = (5, 6, 7, 13, 22)
 
 
-@dataclass(frozen=True, eq=False)
+@dataclass(frozen=True)
 class Totals:
-    """Both discharges, the width, and the panels of the method that is the result.
-
-    panel_vertical: the vertical of each panel among all, in a zone the one it begins with.
-    """
+    """Both discharges, the width, and the panels of the method that is the result."""
 
     mid_m3s: float
     mean_m3s: float
     width_m: float
     verticals: int
-    columns: Columns
-    panel_flow_m3s: Floats
-    panel_vertical: Indices
+    panels: tuple[Panel, ...]
 
 
 def of_whole(
-    sheet: Sheet, totals: Totals, *, stage: MeanStage | None, settings: GaugingSettings
+    totals: Totals, *, meter: Meter | None, stage: MeanStage | None, settings: GaugingSettings
 ) -> Iterator[Finding]:
     """Find what to ask about the gauging. Limits: settings; sources: in the findings."""
-    yield from _shares(totals, settings)
+    yield from _shares(totals.panels, settings)
     yield from _count(totals)
     yield from _apart(totals, settings.methods_apart_percent)
     yield from _stage(stage, settings)
-    if sheet.meter is not None:
-        yield from _meter(sheet.meter, settings)
+    if meter is not None:
+        yield from _meter(meter, settings)
 
 
 def rating_deviation(
@@ -76,23 +70,19 @@ def rating_deviation(
     return Finding("rating_deviation", "discharge_m3s", said, limit_m3s, RATING_SOURCE)
 
 
-def _shares(totals: Totals, settings: GaugingSettings) -> Iterator[Finding]:
-    flow = totals.panel_flow_m3s
-    total = abs(float(flow.sum()))
-    if total == 0:
-        return
-    percent = 100 * np.abs(flow) / total
-    limit = settings.panel_share_percent
+def _shares(panels: Sequence[Panel], settings: GaugingSettings) -> Iterator[Finding]:
+    limit, advice = settings.panel_share_percent, settings.panel_share_advice_percent
     text = gettext_noop(
-        "Vertical {vertical}: its panel carries {value} % of the flow; the limit is {limit} %."
+        "The panel from {start} m to {end} m carries {value} % of the flow; the limit is {limit} %."
     )
-    for k in (percent > limit).nonzero()[0].tolist():
-        i, value = int(totals.panel_vertical[k]), round(float(percent[k]), 1)
-        said = sentence(text, vertical=i + 1, value=value, limit=limit)
-        place = totals.columns.place(i)
-        yield Finding("panel_share", "distance_m", said, limit, PANEL_SOURCE, *place)
-    advice = settings.panel_share_advice_percent
-    count = int(((percent > advice) & (percent <= limit)).sum())
+    for panel in panels:
+        percent = 100 * abs(panel.share)
+        if percent > limit:
+            start, end, value = round(panel.from_m, 3), round(panel.to_m, 3), round(percent, 1)
+            said = sentence(text, start=start, end=end, value=value, limit=limit)
+            place = (panel.channel, panel.vertical)
+            yield Finding("panel_share", "distance_m", said, limit, PANEL_SOURCE, *place)
+    count = sum(advice < 100 * abs(panel.share) <= limit for panel in panels)
     if count:
         text = gettext_noop(
             "{count} more panels carry over {limit} % of the flow; more verticals would be better."

@@ -68,7 +68,6 @@ class Uncertainty:
 def combine(
     flow_m3s: Floats,
     *,
-    discharge_m3s: float,
     verticals_percent: float,
     systematic_percent: float,
     random_percent: Floats,
@@ -76,9 +75,9 @@ def combine(
 ) -> Uncertainty:
     """Combine the uncertainties of the panels and of the whole.
 
-    flow_m3s float64[n] of the verticals' panels, whose shares weigh; discharge_m3s: the result
-    (by either method), to which the percentages apply; random_percent float64[5, n]: width, depth,
-    points, meter and exposure, the last two divided by √(number of points) already.
+    flow_m3s float64[n] of the verticals' panels, their sum the discharge; random_percent
+    float64[5, n]: width, depth, points, meter and exposure, the last two divided by √(number of
+    points) already.
     Result in % and m³/s. Source: ISO 748:2007, equation of u(Q).
     """
     total = abs(float(flow_m3s.sum()))
@@ -101,7 +100,7 @@ def combine(
         exposure,
         u_percent,
         None if u_percent is None else 2 * u_percent,
-        2 * u / 100 if u_percent is None else 2 * u_percent / 100 * abs(discharge_m3s),
+        2 * u / 100,
         agency_values,
     )
 

@@ -4,7 +4,7 @@ from dataclasses import dataclass
 
 import numpy as np
 
-from network.numerics.arrays import Floats
+from network.numerics.arrays import Bools, Floats
 
 
 @dataclass(frozen=True)
@@ -39,19 +39,15 @@ def mean_stage(
     order = readings_s.argsort(kind="stable")
     t, h = readings_s[order], readings_m[order]
     start_s, end_s = period_s or (t[0], t[-1])
-    during = h[(t >= start_s) & (t <= end_s)]
     ends = np.interp([start_s, end_s], t, h)
-    every = np.concatenate((ends, during))
+    every = np.concatenate((ends, h[(t >= start_s) & (t <= end_s)]))
     change_m = float(every.max() - every.min())
     noted = ~np.isnan(vertical_s)
     weight = np.abs(flow_m3s)
     weighted = change_m > limit_m + 1e-9 and bool(weight.sum() > 0)
     stage_m = float(ends.mean())
     if weighted:
-        n = len(vertical_s)
-        place = np.concatenate(([-1.0], noted.nonzero()[0], [float(n)]))
-        time = np.concatenate(([start_s], vertical_s[noted], [end_s]))
-        times_s = np.interp(np.arange(n), place, time)
+        times_s = _times_s(vertical_s, noted, (float(start_s), float(end_s)))
         # h̄ = Σ qᵢ·hᵢ / Q
         stage_m = float(weight @ np.interp(times_s, t, h) / weight.sum())
     read_s = np.concatenate(([start_s], t[(t > start_s) & (t < end_s)], [end_s]))
@@ -62,3 +58,10 @@ def mean_stage(
         times_assumed=weighted and not noted.all(),
         longest_interval_s=float((read_s[1:] - read_s[:-1]).max()),
     )
+
+
+def _times_s(vertical_s: Floats, noted: Bools, period_s: tuple[float, float]) -> Floats:
+    n = len(vertical_s)
+    place = np.concatenate(([-1], noted.nonzero()[0], [n]))
+    known_s = np.concatenate((period_s[:1], vertical_s[noted], period_s[1:]))
+    return np.asarray(np.interp(np.arange(n), place, known_s), dtype=np.float64)

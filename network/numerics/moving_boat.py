@@ -76,25 +76,29 @@ def by_moving_boat(
     left = np.array([t.from_left_bank for t in transects])
     one_way = bool(left.all() or not left.any())
     total = float(flows.mean() if one_way else (flows[left].mean() + flows[~left].mean()) / 2)
-    parts = [
-        (SYSTEMATIC, settings.systematic_percent),
-        (
-            gettext_noop("scatter of the transects"),
-            repeats_percent(flows.tolist(), settings.scatter_percent),
-        ),
-    ]
-    stated = [SYSTEMATIC, *([REPEATS] if len(flows) < FEW_REPEATS else [])]
-    untested = gettext_noop("no moving-bed test")
-    if bed_test is None and tracks_the_bed:
-        parts.append((untested, settings.no_bed_test_percent))
-        stated.append(untested)
+    parts, stated = _parts(flows.tolist(), bed_test is None and tracks_the_bed, settings)
     findings = (
         *_pair_findings(transects, settings),
         *_scatter_findings(flows.tolist(), total, settings),
         *_bed_findings(bed_test, ratio, tracks_the_bed, settings),
     )
     repeats = tuple(flows.tolist())
-    return OtherGauging("moving_boat", total, tuple(parts), repeats, findings, tuple(stated))
+    return OtherGauging("moving_boat", total, parts, repeats, findings, stated)
+
+
+def _parts(
+    flows: list[float], untested: bool, settings: MovingBoatSettings
+) -> tuple[tuple[tuple[str, float], ...], tuple[str, ...]]:
+    """Give the uncertainty by cause, and the causes that rest on the agency's figures."""
+    scatter = gettext_noop("scatter of the transects")
+    no_test = gettext_noop("no moving-bed test")
+    parts = [
+        (SYSTEMATIC, settings.systematic_percent),
+        (scatter, repeats_percent(flows, settings.scatter_percent)),
+        *([(no_test, settings.no_bed_test_percent)] if untested else []),
+    ]
+    few = [REPEATS] if len(flows) < FEW_REPEATS else []
+    return tuple(parts), (SYSTEMATIC, *few, *([no_test] if untested else []))
 
 
 def _bed_ratio(test: MovingBedTest | None, settings: MovingBoatSettings) -> float:

@@ -3,7 +3,7 @@
 from dataclasses import replace
 
 import pytest
-from hypothesis import given
+from hypothesis import given, settings
 from hypothesis import strategies as st
 
 from network.numerics.gauging import compute, preview
@@ -19,6 +19,9 @@ from network.numerics.gauging_input import (
     Vertical,
 )
 from tests.numerics.sheets import METER, channel, counted, plain_sheet
+
+# Quick, and no clock on a shared machine.
+few = settings(max_examples=30, deadline=None)
 
 
 def test_three_verticals_by_hand():
@@ -39,8 +42,7 @@ def test_three_verticals_by_hand():
 
 
 def test_the_agency_chooses_the_method_that_is_the_result():
-    settings = GaugingSettings(method=DischargeMethod.MEAN_SECTION)
-    result = compute(plain_sheet(), settings)
+    result = compute(plain_sheet(), GaugingSettings(method=DischargeMethod.MEAN_SECTION))
     assert result.discharge_m3s == result.mean_section_m3s
     assert len(result.panels) == 4
 
@@ -158,6 +160,13 @@ def test_the_first_cells_typed_give_no_result_and_no_error():
     assert preview(Sheet(())).result is None
 
 
+@pytest.mark.parametrize("absurd", [float("inf"), 9e307, -9e307])
+def test_a_number_no_river_gives_counts_as_a_blank(absurd):
+    so_far = preview(plain_sheet(depth_m=absurd))
+    assert (so_far.faults[0].vertical, so_far.faults[0].field) == (1, "depth_m")
+    assert so_far.section.width_m == 8
+
+
 def test_a_finished_sheet_previews_as_it_computes():
     assert preview(plain_sheet()).result == compute(plain_sheet())
 
@@ -165,6 +174,7 @@ def test_a_finished_sheet_previews_as_it_computes():
 cell = st.none() | st.floats(allow_nan=True, allow_infinity=True)
 
 
+@few
 @given(
     st.lists(st.tuples(cell, cell, cell, cell, cell), max_size=4),
     st.tuples(cell, cell),
@@ -204,6 +214,7 @@ def discharges(sheet):
     return [result.mid_section_m3s, result.mean_section_m3s, result.section.area_m2]
 
 
+@few
 @given(sections)
 def test_the_bank_of_start_does_not_matter(rows):
     sheet = from_steps(rows)
@@ -215,6 +226,7 @@ def test_the_bank_of_start_does_not_matter(rows):
     assert len(back.findings) == len(there.findings)
 
 
+@few
 @given(sections)
 def test_doubling_velocities_doubles_the_discharge(rows):
     once = discharges(from_steps(rows))
@@ -222,12 +234,14 @@ def test_doubling_velocities_doubles_the_discharge(rows):
     assert twice == pytest.approx([2 * once[0], 2 * once[1], once[2]], rel=1e-12)
 
 
+@few
 @given(sections, st.floats(0.01, 0.99))
 def test_a_sounding_on_the_straight_line_changes_nothing(rows, sounding):
     expected = discharges(from_steps(rows))
     assert discharges(from_steps(rows, sounding)) == pytest.approx(expected, rel=1e-12)
 
 
+@few
 @given(st.integers(5, 44))
 def test_uncertainty_falls_as_verticals_increase(count):
     few, more = (

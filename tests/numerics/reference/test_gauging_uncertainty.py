@@ -21,7 +21,6 @@ def test_worked_example_of_equation_4_52():
     causes = [0.15, 0.60, 2.5, 0.5 / n**0.5, 5.7 / n**0.5]
     result = combine(
         np.full(20, 138 / 20),
-        discharge_m3s=138.0,
         verticals_percent=verticals_percent(20),
         systematic_percent=1.0,
         random_percent=np.repeat([causes], 20, axis=0).T,
