@@ -6,10 +6,10 @@ from datetime import datetime
 
 from django.core.exceptions import ValidationError
 from django.db import IntegrityError, models, transaction
-from django.db.models import F
+from django.db.models import F, Q
 from django.utils.translation import gettext as _
 
-from network.models import Act, Person, Station
+from network.models import Act, Infill, Person, Station
 from network.models.acts import current_act
 from network.models.violations import sentence_for
 
@@ -61,8 +61,14 @@ def open_act(
 
 
 def raise_record_version(station: Station) -> None:
-    """Say that an input of the station's published figures changed, within the open act."""
-    Station.objects.filter(pk=station.pk).update(record_version=F("record_version") + 1)
+    """Say that an input of the station's published figures changed, within the open act.
+
+    Stations that are estimated from this one by regression change with it.
+    """
+    from_it = Infill.objects.standing().filter(neighbour=station).values("station")
+    Station.objects.filter(Q(pk=station.pk) | Q(pk__in=from_it)).update(
+        record_version=F("record_version") + 1
+    )
 
 
 def raise_every_record_version() -> None:
