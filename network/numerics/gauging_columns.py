@@ -1,7 +1,7 @@
 """A gauging sheet laid out in columns, so that it can be checked and computed as arrays."""
 
-from collections.abc import Mapping
 from dataclasses import dataclass, replace
+from functools import lru_cache
 from operator import attrgetter
 
 import numpy as np
@@ -19,7 +19,6 @@ _SOUNDING_CELLS = attrgetter(
 )
 _POINT_CELLS = attrgetter("fraction", "velocity_ms", "revolutions", "seconds")
 _FRACTION = attrgetter("fraction")
-NO_WEIGHTS: Mapping[float | None, float] = {}
 
 
 @dataclass(frozen=True, eq=False)
@@ -134,13 +133,9 @@ def _points(verticals: list[Vertical]) -> tuple[list[int], list[float], list[int
     points: list[Point] = []
     for i, vertical in enumerate(verticals):
         if vertical.points:
-            found = point_method(map(_FRACTION, vertical.points))
-            known = found is not None and len(found.weights) == len(vertical.points)
-            twice = vertical.mean_velocity_ms is not None
-            unusable = GIVEN_TWICE if twice else UNKNOWN_SET
-            methods.append(found.method if found and known and not twice else unusable)
-            weight = found.weights if found else NO_WEIGHTS
-            weights += [weight.get(p.fraction, 0.0) for p in vertical.points]
+            method, weight = _method_of(tuple(map(_FRACTION, vertical.points)))
+            methods.append(GIVEN_TWICE if vertical.mean_velocity_ms is not None else method)
+            weights += weight
             owners += [i] * len(vertical.points)
             points += vertical.points
         elif vertical.mean_velocity_ms is not None:
@@ -151,3 +146,11 @@ def _points(verticals: list[Vertical]) -> tuple[list[int], list[float], list[int
         else:
             methods.append(Method.SOUNDING)
     return methods, weights, owners, points
+
+
+@lru_cache(maxsize=256)  # a sheet repeats a few sets in all its verticals
+def _method_of(fractions: tuple[float | None, ...]) -> tuple[int, tuple[float, ...]]:
+    found = point_method(fractions)
+    if found is None or len(found.weights) != len(fractions):
+        return UNKNOWN_SET, (0.0,) * len(fractions)
+    return found.method, tuple(found.weights[f] for f in fractions)
