@@ -60,6 +60,15 @@ def open_act(
         raise Refusal(" ".join(error.messages)) from error
 
 
+def lock_station(station: Station) -> None:
+    """Let acts on one station wait for one another until the open act ends.
+
+    Without the key: the Act row already refers to the station, and two acts that then both wanted
+    the whole row would wait for each other for ever.
+    """
+    Station.objects.select_for_update(no_key=True).get(pk=station.pk)
+
+
 def raise_record_version(station: Station) -> None:
     """Say that an input of the station's published figures changed, within the open act.
 
