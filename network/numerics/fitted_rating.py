@@ -5,6 +5,7 @@ from dataclasses import dataclass
 from itertools import pairwise
 
 import numpy as np
+from scipy.stats import norm
 from scipy.stats import t as student_t
 
 from network.numerics.arrays import Floats, Indices
@@ -112,13 +113,10 @@ class RatingFit:
     def band_at(self, stage_m: Floats) -> tuple[Floats, Floats]:
         """Give the 95 % band of the mean relation, lower and upper, float64[n] m³/s each.
 
-        By Student's t at N − p when h0 and breaks are given, else the 2.5 and 97.5 percentiles of
-        the redrawn curves.
+        By Student's t at N − p when h0 and breaks are given, else from the redrawn curves.
         """
         if self.redrawn is not None:
-            flows = np.exp(self.redrawn.ln_flow(stage_m))
-            lower, upper = np.percentile(flows, [2.5, 97.5], axis=0)
-            return lower, upper
+            return self._redrawn_band(self.redrawn, stage_m)
         ln_flow, half = self.fitted.ln_flow(stage_m)[0], np.zeros(len(stage_m))
         for k, segment in enumerate(self.segments):
             mine = self._segment_at(stage_m) == k
@@ -154,6 +152,24 @@ class RatingFit:
             gauged_highest_m=self.gauged_highest_m,
         )
 
+    def _redrawn_band(self, redrawn: JoinedRows, stage_m: Floats) -> tuple[Floats, Floats]:
+        """Take the 2.5 and 97.5 percentiles, the wider side on both sides of the curve in ln Q.
+
+        Curves joined where they cross round the corner off on one side, the fitted one as well as
+        the redrawn: there plain percentiles hold the truth in two cases of three only.
+        """
+        flows, curve = np.exp(redrawn.ln_flow(stage_m)), self.flow_at(stage_m)
+        lower, upper = np.percentile(flows, [2.5, 97.5], axis=0)
+        # Q̂²/Q_upper and Q̂²/Q_lower are the mirror images in ln Q, where the flow is not zero
+        flowing = lower > 0
+        squared, one = curve**2, np.ones(len(stage_m))
+        mirrored_lower = squared / np.where(flowing, upper, one)
+        mirrored_upper = squared / np.where(flowing, lower, one)
+        return (
+            np.where(flowing, np.minimum(lower, mirrored_lower), lower),
+            np.where(flowing, np.maximum(upper, mirrored_upper), upper),
+        )
+
     def _segment_at(self, stage_m: Floats) -> Indices:
         return np.searchsorted(self.fitted.joints_m[0], stage_m, side="right")
 
@@ -176,7 +192,8 @@ def joint_intervals(
 ) -> tuple[Interval, ...]:
     """Give the 95 % interval of the stage of each joint."""
     if redrawn is not None:
-        return tuple(_percentiles(joint_m) for joint_m in redrawn.joints_m.T)
+        joints = zip(redrawn.joints_m.T, segments[1:], strict=True)
+        return tuple(_bias_corrected(rows, upper.lower_stage_m) for rows, upper in joints)
     return tuple(_joint_interval(low, up) for low, up in pairwise(segments))
 
 
@@ -192,7 +209,7 @@ def _fitted_segment(
         spread = line.sums.t_95 * np.sqrt(line.sums.variance / line.sums.sum_xx)
         b_95 = (b - spread, b + spread)
     else:
-        ln_c_95, b_95 = _percentiles(redrawn.ln_c), _percentiles(redrawn.b)
+        ln_c_95, b_95 = _bias_corrected(redrawn.ln_c, ln_c), _bias_corrected(redrawn.b, b)
     return FittedSegment(
         lower_stage_m=lower_stage_m,
         c=float(np.exp(ln_c)),
@@ -202,7 +219,7 @@ def _fitted_segment(
         scatter=line.scatter,
         c_95=(float(np.exp(ln_c_95[0])), float(np.exp(ln_c_95[1]))),
         b_95=(float(b_95[0]), float(b_95[1])),
-        h0_95_m=_percentiles(redrawn.h0_m) if redrawn and not line.zero_given else None,
+        h0_95_m=_bias_corrected(redrawn.h0_m, h0_m) if redrawn and not line.zero_given else None,
         h0_at_limit=line.zero_at_limit,
         sums=line.sums,
     )
@@ -222,6 +239,13 @@ def _joint_interval(lower: FittedSegment, upper: FittedSegment) -> Interval:
     return (float(stage_m - half), float(stage_m + half))
 
 
-def _percentiles(rows: Floats) -> Interval:
-    low, high = np.percentile(rows, [2.5, 97.5])
+def _bias_corrected(rows: Floats, estimate: float) -> Interval:
+    """Give the 95 % interval of redrawn values, its percentiles shifted by the draws' own bias.
+
+    Source: bias-corrected percentiles (Efron 1981, from memory); plain ones held 90 % at times.
+    """
+    share = np.clip(np.mean(rows < estimate), 0.5 / len(rows), 1 - 0.5 / len(rows))
+    # z₀ = Φ⁻¹(share of draws below the estimate), percentiles at Φ(2·z₀ ± 1.96)
+    levels = norm.cdf(2 * norm.ppf(share) + norm.ppf([0.025, 0.975]))
+    low, high = np.quantile(rows, levels)
     return (float(low), float(high))

@@ -40,15 +40,10 @@ def narrowing_bands(
     stage_m float64[n]: stages that occurred, at equal steps of time; gauged_stage_m: stages of the
     gaugings of the fit. The bands are equal slices of the stages that occurred, those without flow
     left out; each counts by its share of the volume, or of the time, so that low flows count too.
-    A gauging is taken to scatter as those of its segment. The best band comes first.
-    Raises ValueError where no stage has flow. Source: the update of a least-squares covariance by
-    one observation; the weighting is common practice.
+    A gauging is taken to scatter as those of its segment. The best band comes first. Raises
+    ValueError where no stage has flow. Source: update of a covariance by one observation.
     """
-    stage_m = stage_m[~np.isnan(stage_m)]
-    flow_m3s = fit.flow_at(stage_m)
-    stage_m, flow_m3s = stage_m[flow_m3s > 0], flow_m3s[flow_m3s > 0]
-    if not len(stage_m):
-        raise ValueError("No stage that occurred has flow.")
+    stage_m, flow_m3s = _with_flow(stage_m, fit)
     edges_m = np.linspace(stage_m.min(), stage_m.max() + 1e-9, bands + 1)
     middles_m = (edges_m[1:] + edges_m[:-1]) / 2
     counted = flow_m3s if weighted_by == "volume" else np.ones(len(stage_m))
@@ -58,21 +53,28 @@ def narrowing_bands(
     variance = np.diag(covariance)
     # var after a gauging at j: V_ii − V_ij² / (V_jj + s²)
     after = variance[:, None] - covariance**2 / (variance + fit.scatter_at(middles_m) ** 2)
-    now_percent = _u95_percent(share @ variance)
-    after_percent = _u95_percent(share @ after)
+    mean_now, mean_after = _u95_percent(share @ variance), _u95_percent(share @ after)
     found = [
         StageBand(
-            float(edges_m[k]),
-            float(edges_m[k + 1]),
-            float(share[k]),
-            int(gaugings[k]),
-            float(_u95_percent(variance[k])),
-            float(now_percent),
-            float(after_percent[k]),
+            lower_stage_m=float(edges_m[k]),
+            upper_stage_m=float(edges_m[k + 1]),
+            share=float(share[k]),
+            gaugings=int(gaugings[k]),
+            u95_percent=float(_u95_percent(variance[k])),
+            mean_u95_percent_now=float(mean_now),
+            mean_u95_percent_after=float(mean_after[k]),
         )
         for k in range(bands)
     ]
     return tuple(sorted(found, key=lambda band: band.mean_u95_percent_after))
+
+
+def _with_flow(stage_m: Floats, fit: RatingFit) -> tuple[Floats, Floats]:
+    flow_m3s = fit.flow_at(stage_m)
+    flowing = flow_m3s > 0
+    if not flowing.any():
+        raise ValueError("No stage that occurred has flow.")
+    return stage_m[flowing], flow_m3s[flowing]
 
 
 def _u95_percent(variance: Floats) -> Floats:

@@ -5,7 +5,7 @@ from itertools import pairwise
 
 import numpy as np
 
-from network.numerics.arrays import Floats
+from network.numerics.arrays import Bools, Floats
 
 
 @dataclass(frozen=True, eq=False)
@@ -66,14 +66,20 @@ def crossings(
     low = np.maximum(between_m[0], least + 1e-9 * np.maximum(np.abs(least), 1))
     high = np.maximum(between_m[1], low)
     grid = low[:, None] + (high - low)[:, None] * np.linspace(0, 1, 129)
-    gap = upper.ln_flow(grid) - lower.ln_flow(grid)
-    turns = np.signbit(gap[:, 1:]) != np.signbit(gap[:, :-1])
+
+    def below(stage_m: Floats) -> Bools:
+        # ln Q₂ < ln Q₁
+        rise = upper.ln_c[:, None] + upper.b[:, None] * np.log(stage_m - upper.h0_m[:, None])
+        other = lower.ln_c[:, None] + lower.b[:, None] * np.log(stage_m - lower.h0_m[:, None])
+        return rise < other
+
+    side = below(grid)
+    turns = side[:, 1:] != side[:, :-1]
     distance = np.where(turns, np.abs((grid[:, 1:] + grid[:, :-1]) / 2 - near_m[:, None]), np.inf)
     rows, at = np.arange(len(grid)), distance.argmin(axis=1)
-    left, right, sign = grid[rows, at], grid[rows, at + 1], np.signbit(gap[rows, at])
+    left, right, first = grid[rows, at], grid[rows, at + 1], side[rows, at]
     for _ in range(40):
         middle = (left + right) / 2
-        step = middle[:, None]
-        same = np.signbit((upper.ln_flow(step) - lower.ln_flow(step))[:, 0]) == sign
+        same = below(middle[:, None])[:, 0] == first
         left, right = np.where(same, middle, left), np.where(same, right, middle)
     return np.where(turns.any(axis=1), (left + right) / 2, np.nan)

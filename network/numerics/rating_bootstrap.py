@@ -5,49 +5,49 @@ from collections.abc import Sequence
 import numpy as np
 
 from network.numerics.arrays import Floats, Indices
-from network.numerics.fitted_rating import LineSums
+from network.numerics.fitted_rating import FittedLine
 from network.numerics.power_rows import JoinedRows, PowerRows, joined
+from network.numerics.rating_parts import FitChoice, Gaugings, positions, segment_numbers
 from network.numerics.rating_search import search_breaks, search_zero, weighted_lines
 
-MOST_POSITIONS = 32  # breaks tried in a draw: closer than the draws scatter
+MOST_POSITIONS = 64  # breaks tried in a draw: closer together than the draws scatter
 
 
 def redraw(
-    stage_m: Floats,
+    gaugings: Gaugings,
     fitted: JoinedRows,
     *,
-    weights: Floats,
-    sums: Sequence[LineSums],
+    lines: Sequence[FittedLine],
+    choice: FitChoice,
     firsts: Indices,
-    zeros_m: Sequence[float | None],
-    positions: Sequence[Indices],
     draws: int,
     seed: int,
-) -> JoinedRows:
-    """Fit `draws` sets of gaugings drawn about the fitted curve, one row each.
+) -> JoinedRows | None:
+    """Fit `draws` sets of gaugings drawn about the fitted curve, one row each, if anything is free.
 
-    stage_m and weights float64[n], stages rising; sums of each segment; firsts: index of the first
-    gauging of each upper segment; positions: those tried for each break, one where it is given;
-    zeros_m None = searched. A draw is the curve plus normal errors of variance/weight, the
-    variance itself drawn from its distribution (χ² at N − p), so that where nothing is searched
-    the intervals are those of Student's t. The weights stay. Seeded, so the same gaugings give the
-    same band.
+    lines: the fitted segments; firsts: the first gauging of each upper one. A draw is the curve
+    plus normal errors of variance/weight, the variance itself drawn from its distribution (χ² at
+    N − p), so that the intervals would be those of Student's t if nothing were searched; then there
+    is none (None). The weights stay. Seeded, so the same gaugings give the same band.
     Source: parametric bootstrap (Efron and Tibshirani 1993), from memory.
     """
+    if None not in (*choice.zeros_m, *choice.breaks_m):
+        return None
     random = np.random.default_rng(seed)
-    segment_of = np.searchsorted(firsts, np.arange(len(stage_m)), side="right")
-    freedom = np.array([s.degrees_of_freedom for s in sums], dtype=np.float64)
-    variances = np.array([s.variance for s in sums])
+    stage_m, weights = gaugings.stage_m, np.concatenate([line.weights for line in lines])
+    freedom = np.array([line.sums.degrees_of_freedom for line in lines], dtype=np.float64)
+    variances = np.array([line.sums.variance for line in lines])
     # σ* = σ·√(ν/χ²_ν)
-    spread = np.sqrt(variances * freedom / random.chisquare(freedom, (draws, len(freedom))))
+    spread = np.sqrt(variances * freedom / random.chisquare(freedom, (draws, len(lines))))
     errors = random.standard_normal((draws, len(stage_m))) / np.sqrt(weights)
-    y = fitted.ln_flow(stage_m) + errors * spread[:, segment_of]
+    y = fitted.ln_flow(stage_m) + errors * spread[:, segment_numbers(len(stage_m), firsts)]
     firsts_of_rows = np.tile(firsts, (draws, 1))
-    if any(len(tried) > 1 for tried in positions):
-        thin = [tried[:: -(-len(tried) // MOST_POSITIONS)] for tried in positions]
-        found = search_breaks(stage_m, y, weights, zeros_m=zeros_m, positions=thin)
+    if None in choice.breaks_m:
+        tried_for = positions(gaugings, choice)
+        thin = [tried[:: -(-len(tried) // MOST_POSITIONS)] for tried in tried_for]
+        found = search_breaks(stage_m, y, weights, zeros_m=choice.zeros_m, positions=thin)
         firsts_of_rows = np.where(found >= 0, found, firsts_of_rows)
-    return _fit_rows(stage_m, y, weights, firsts=firsts_of_rows, zeros_m=zeros_m)
+    return _fit_rows(stage_m, y, weights, firsts=firsts_of_rows, zeros_m=choice.zeros_m)
 
 
 def _fit_rows(

@@ -22,7 +22,7 @@ from network.numerics.rating_parts import (
     FitRefused,
     Gaugings,
     firsts_of_segments,
-    positions,
+    segment_numbers,
 )
 from network.numerics.rating_search import FARTHEST, LEAST_GAUGINGS, search_zero, weighted_lines
 from network.numerics.sentences import gettext_noop
@@ -43,34 +43,20 @@ def fit_rating(
     """Fit ln Q = ln C + b·ln(h − h₀) in each segment by weighted least squares.
 
     stage_m, flow_m3s, u95_percent (the gauging's 95 % uncertainty) float64[n] in any order. The
-    weights are 1/(u_Q² + s²), s the scatter about the curve, iterated until it stands, so that one
-    very good gauging does not rule. Gaugings of zero flow are left out and counted. Breaks are
-    searched among the gaugings by the smallest weighted residual sum; the segments are joined
-    where their curves cross. draws and seed serve the bootstrap where something is searched.
+    weights are 1/(u_Q² + s²), s the scatter about the curve, iterated, so that one very good
+    gauging does not rule. Zero flows are left out and counted. Breaks are searched by the smallest
+    weighted residual sum; the segments are joined where they cross. draws, seed: of the bootstrap.
     Raises FitRefused with a sentence; ValueError for figures that are none.
     """
-    _check(stage_m, flow_m3s, u95_percent)
-    order = np.argsort(stage_m, kind="stable")
-    order = order[flow_m3s[order] > 0]
-    gaugings = Gaugings(stage_m[order], np.log(flow_m3s[order]), u95_percent[order] / 200)
+    order, gaugings = _with_flow(stage_m, flow_m3s, u95_percent)
     firsts, lines = _settle(gaugings, choice)
     fitted, gaps = _join(gaugings, lines, firsts=firsts, must_meet=choice.must_meet)
     weights, segment_of = np.zeros(len(stage_m)), np.full(len(stage_m), -1)
     weights[order] = np.concatenate([line.weights for line in lines])
-    segment_of[order] = np.searchsorted(firsts, np.arange(len(order)), side="right")
-    redrawn = None
-    if choice.searches:
-        redrawn = redraw(
-            gaugings.stage_m,
-            fitted,
-            weights=weights[order],
-            sums=[line.sums for line in lines],
-            firsts=firsts,
-            zeros_m=choice.zeros_m,
-            positions=positions(gaugings, choice),
-            draws=draws,
-            seed=seed,
-        )
+    segment_of[order] = segment_numbers(len(order), firsts)
+    redrawn = redraw(
+        gaugings, fitted, lines=lines, choice=choice, firsts=firsts, draws=draws, seed=seed
+    )
     segments = fitted_segments(lines, fitted, redrawn=redrawn, lowest_m=float(gaugings.stage_m[0]))
     return RatingFit(
         segments=segments,
@@ -94,7 +80,8 @@ def deviations_percent(flow_m3s: Floats, curve_m3s: Floats) -> Floats:
     return np.where(usable, 100 * (flow_m3s / np.where(usable, curve_m3s, 1) - 1), np.nan)
 
 
-def _check(stage_m: Floats, flow_m3s: Floats, u95_percent: Floats) -> None:
+def _with_flow(stage_m: Floats, flow_m3s: Floats, u95_percent: Floats) -> tuple[Indices, Gaugings]:
+    """Check the figures and give the gaugings with flow rising in stage, and where they stood."""
     if not len(stage_m) == len(flow_m3s) == len(u95_percent):
         raise ValueError("Stages, flows and uncertainties differ in number.")
     for name, values in (("stage", stage_m), ("flow", flow_m3s), ("uncertainty", u95_percent)):
@@ -102,6 +89,9 @@ def _check(stage_m: Floats, flow_m3s: Floats, u95_percent: Floats) -> None:
             raise ValueError(f"A {name} is missing or not a number.")
     if (flow_m3s < 0).any() or (u95_percent < 0).any():
         raise ValueError("A flow or an uncertainty is negative.")
+    order = np.argsort(stage_m, kind="stable")
+    order = order[flow_m3s[order] > 0]
+    return order, Gaugings(stage_m[order], np.log(flow_m3s[order]), u95_percent[order] / 200)
 
 
 def _settle(gaugings: Gaugings, choice: FitChoice) -> tuple[Indices, list[FittedLine]]:
@@ -131,7 +121,9 @@ def _lines(gaugings: Gaugings, choice: FitChoice, firsts: Indices) -> list[Fitte
     ):
         part = gaugings.part(start, stop)
         _refuse(part, zero_m, number)
-        lines.append(_line(part, zero_m))
+        # a searched break is a parameter too: of the segment above it
+        searched = (zero_m is None) + (number > 1 and choice.breaks_m[number - 2] is None)
+        lines.append(_line(part, zero_m, freedom=len(part.stage_m) - 2 - searched))
         if lines[-1].power.b[0] <= 0:
             raise FitRefused(
                 gettext_noop("In segment {number} flow does not rise with stage."), number=number
@@ -162,10 +154,9 @@ def _refuse(part: Gaugings, zero_m: float | None, number: int) -> None:
         )  # fmt: skip
 
 
-def _line(part: Gaugings, zero_m: float | None) -> FittedLine:
+def _line(part: Gaugings, zero_m: float | None, *, freedom: int) -> FittedLine:
     """Fit one segment, its weights iterated until the scatter stands."""
     n, stage_m, y = len(part.stage_m), part.stage_m, part.ln_flow[None, :]
-    freedom = n - (2 if zero_m is not None else 3)
     scatter, h0_m = 1.0, zero_m if zero_m is not None else np.nan
     for _ in range(60):
         # w = 1/(u_Q² + s²)

@@ -40,11 +40,6 @@ class FitChoice:
         if any(a >= b for a, b in pairwise(given)):
             raise ValueError("The breaks do not rise.")
 
-    @property
-    def searches(self) -> bool:
-        """Say whether a stage of zero flow or a break is searched."""
-        return None in self.zeros_m or None in self.breaks_m
-
 
 @dataclass(frozen=True, eq=False)
 class Gaugings:
@@ -106,3 +101,8 @@ def _search(
             gettext_noop("No break leaves each segment 5 gaugings at different stages above h₀.")
         )
     return firsts
+
+
+def segment_numbers(count: int, firsts: Indices) -> Indices:
+    """Number the segments, from 0, that so many gaugings rising in stage belong to."""
+    return np.searchsorted(firsts, np.arange(count), side="right")

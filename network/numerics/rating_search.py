@@ -76,7 +76,8 @@ def search_zero(stage_m: Floats, y: Floats, w: Floats, *, steps: int) -> Floats:
         return remainder
 
     best = _least(residual_sum, np.log(NEAREST), np.log(FARTHEST), steps)
-    return low_m - range_m * np.exp(best)
+    h0_m: Floats = low_m - range_m * np.exp(best)
+    return h0_m
 
 
 def _row_sums(a: Floats, b: Floats) -> Floats:
@@ -99,7 +100,8 @@ def _least(of: Callable[[Floats], Floats], low: float, high: float, steps: int) 
         f_fresh = of(fresh)
         inner, outer = np.where(lower, fresh, outer), np.where(lower, inner, fresh)
         f_inner, f_outer = np.where(lower, f_fresh, f_outer), np.where(lower, f_inner, f_fresh)
-    return np.where(f_inner < f_outer, inner, outer)
+    least: Floats = np.where(f_inner < f_outer, inner, outer)
+    return least
 
 
 def search_breaks(
