@@ -12,10 +12,19 @@ from network.models.gauges import (
     StaffPlate,
     StationZero,
 )
-from network.models.gaugings import Gauging, GaugingFinding
+from network.models.gaugings import Gauging, GaugingFinding, StageReading
 from network.models.instruments import Deployment, Instrument, MeterGroup, MeterPair
 from network.models.jobs import Job
 from network.models.levels import LevelCheck, PegTest, Sight
+from network.models.other_methods import (
+    BoatTrack,
+    FloatReach,
+    TimedFloat,
+    TracerInjection,
+    TracerSample,
+    VesselFill,
+    WeirHead,
+)
 from network.models.people import Person
 from network.models.plans import (
     FeedLink,
@@ -65,6 +74,7 @@ __all__ = [
     "Benchmark",
     "BenchmarkElevation",
     "Block",
+    "BoatTrack",
     "Calibration",
     "CalibrationPiece",
     "Channel",
@@ -78,6 +88,7 @@ __all__ = [
     "Dismissal",
     "Document",
     "FeedLink",
+    "FloatReach",
     "Gauging",
     "GaugingFinding",
     "ImportFault",
@@ -115,18 +126,24 @@ __all__ = [
     "SiteSurvey",
     "SpinTest",
     "StaffPlate",
+    "StageReading",
     "Station",
     "StationYear",
     "StationZero",
     "Stop",
     "StopTask",
+    "TimedFloat",
     "TowRun",
+    "TracerInjection",
+    "TracerSample",
     "Transect",
     "TypedFlow",
     "Vertical",
     "VerticalPoint",
+    "VesselFill",
     "Visit",
     "VisitReading",
+    "WeirHead",
     "WorkLeft",
     "WorkingRules",
 ]

@@ -68,14 +68,14 @@ class Gauging(Recorded, Versioned):
         _("sounding"), max_length=10, choices=Sounding.choices, default=Sounding.ROD
     )
     spin_test_seconds = models.FloatField(_("spin test, s"), null=True, blank=True)
-    stage_start_m = models.FloatField(_("stage at the start, m"), null=True, blank=True)
-    stage_end_m = models.FloatField(_("stage at the end, m"), null=True, blank=True)
     remarks = models.TextField(_("remarks"), blank=True)
 
     # A result from another method, with its own stated uncertainty.
     stated_discharge_m3s = models.FloatField(_("discharge stated, m³/s"), null=True, blank=True)
     stated_u95_percent = models.FloatField(_("U₉₅ stated, %"), null=True, blank=True)
 
+    # Version of the workbook that was loaded last; cleared when the sheet is saved otherwise.
+    workbook_version = models.PositiveIntegerField(null=True, editable=False)
     state = models.CharField(
         max_length=8, choices=State.choices, default=State.DRAFT, editable=False
     )
@@ -140,6 +140,28 @@ class Gauging(Recorded, Versioned):
 
     def __str__(self) -> str:
         return f"{self.station} {self.started_at:%Y-%m-%d}"
+
+
+class StageReading(models.Model):
+    """A stage read during a gauging, on a plate or typed as stage above the station zero."""
+
+    gauging = models.ForeignKey(Gauging, models.CASCADE, related_name="stages")
+    read_at = models.DateTimeField(_("time"))
+    plate = models.ForeignKey(
+        "network.StaffPlate", models.PROTECT, null=True, blank=True, verbose_name=_("plate"),
+        help_text=_("Blank: the reading is a stage above the station zero."),
+    )  # fmt: skip
+    reading_m = models.FloatField(_("reading, m"))
+
+    history = history()
+
+    class Meta:
+        verbose_name = _("stage reading")
+        verbose_name_plural = _("stage readings")
+        ordering = ["read_at", "pk"]
+
+    def __str__(self) -> str:
+        return f"{self.reading_m} m"
 
 
 class GaugingFinding(models.Model):

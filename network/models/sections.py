@@ -13,9 +13,10 @@ class Channel(models.Model):
 
     class Edge(models.TextChoices):
         SLOPING = "sloping", _("sloping bank")
-        STEEP = "steep", _("steep or rough bank")
-        WALL = "wall", _("smooth wall")
+        ROUGH = "rough", _("steep or rough bank")
+        SMOOTH = "smooth", _("smooth wall")
         DEAD = "dead", _("dead water")
+        TWO_THIRDS = "two_thirds", _("two thirds of the nearest velocity")
 
     class Bank(models.TextChoices):
         LEFT = "left", _("left bank")
@@ -29,7 +30,7 @@ class Channel(models.Model):
     start_distance_m = models.FloatField(_("first edge at, m"))
     start_depth_m = models.FloatField(_("depth at the first edge, m"), default=0)
     start_edge = models.CharField(
-        _("first edge"), max_length=8, choices=Edge.choices, default=Edge.SLOPING
+        _("first edge"), max_length=10, choices=Edge.choices, default=Edge.SLOPING
     )
     start_velocity_ms = models.FloatField(
         _("velocity measured at the first edge, m/s"), null=True, blank=True
@@ -37,7 +38,7 @@ class Channel(models.Model):
     end_distance_m = models.FloatField(_("last edge at, m"))
     end_depth_m = models.FloatField(_("depth at the last edge, m"), default=0)
     end_edge = models.CharField(
-        _("last edge"), max_length=8, choices=Edge.choices, default=Edge.SLOPING
+        _("last edge"), max_length=10, choices=Edge.choices, default=Edge.SLOPING
     )
     end_velocity_ms = models.FloatField(
         _("velocity measured at the last edge, m/s"), null=True, blank=True
@@ -67,15 +68,19 @@ class Vertical(models.Model):
     channel = models.ForeignKey(Channel, models.CASCADE, related_name="verticals")
     position = models.PositiveSmallIntegerField()
     distance_m = models.FloatField(_("distance, m"))
-    depth_m = models.FloatField(_("depth, m"))
+    depth_m = models.FloatField(
+        _("depth, m"), help_text=_("With a line angle: the line let out below the water surface.")
+    )
     measured_at = models.DateTimeField(_("time"), null=True, blank=True)
     angle_deg = models.FloatField(_("angle of the flow, °"), default=0)
     ice_underside_m = models.FloatField(
         _("water surface to underside of ice, m"), null=True, blank=True
     )
     line_angle_deg = models.FloatField(_("angle of the line, °"), null=True, blank=True)
-    air_line_m = models.FloatField(_("line above water, m"), null=True, blank=True)
-    wet_line_m = models.FloatField(_("line in water, m"), null=True, blank=True)
+    air_line_m = models.FloatField(_("guide of the line above water, m"), null=True, blank=True)
+    given_velocity_ms = models.FloatField(
+        _("mean velocity given directly, m/s"), null=True, blank=True
+    )
     # Stored on signing.
     mean_velocity_ms = models.FloatField(null=True, editable=False)
     panel_flow_m3s = models.FloatField(null=True, editable=False)

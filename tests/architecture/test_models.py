@@ -26,12 +26,14 @@ def test_constraint_names_carry_app_and_model(model):
 
 # Rows that have no meaning without their owner and go when it goes.
 OWNED = {
+    "BoatTrack.gauging",
     "CalibrationPiece.calibration",
     "Channel.gauging",
     "CurveBand.curve",
     "CurveGauging.curve",
     "CurvePoint.curve",
     "CurveSegment.curve",
+    "FloatReach.gauging",
     "GaugingFinding.gauging",
     "ImportFault.logger_import",
     "OperationPeriod.station",
@@ -42,14 +44,20 @@ OWNED = {
     "Sight.level_check",
     "SiteCriterion.survey",
     "SpinTest.visit",
+    "StageReading.gauging",
     "StationYear.station",
     "Stop.round",
     "StopTask.stop",
+    "TimedFloat.reach",
     "TowRun.calibration",
+    "TracerInjection.gauging",
+    "TracerSample.injection",
     "Transect.gauging",
     "Vertical.channel",
     "VerticalPoint.vertical",
+    "VesselFill.gauging",
     "VisitReading.visit",
+    "WeirHead.gauging",
     "WorkLeft.visit",
 }
 
