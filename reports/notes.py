@@ -134,7 +134,7 @@ def _extrapolation(facts: Facts) -> Iterator[str]:
             facts.extrapolated_days,
         ).format(n=facts.extrapolated_days)
         if facts.extrapolated_volume_percent.value is not None:
-            yield _("The extrapolated flow makes up {percent} % of the year's volume.").format(
+            yield _("Extrapolated flow in the volume of the year: {percent} %.").format(
                 percent=facts.extrapolated_volume_percent
             )
     highest, gauged = facts.highest_stage_m, facts.highest_gauged_m

@@ -4,9 +4,11 @@ import functools
 import hashlib
 import operator
 import threading
+from collections.abc import Callable
 from dataclasses import dataclass
 from datetime import UTC, datetime
 from pathlib import Path
+from typing import Any
 
 import weasyprint
 from django.contrib.staticfiles import finders
@@ -96,7 +98,7 @@ def finished_page(book: Yearbook) -> Page:
 def draw_figures(book: Yearbook) -> dict[str, str]:
     """Return the figures that the content has arrays for, as SVG text by name."""
     printed = words.figure_words(book)
-    drawn = {
+    drawn: dict[str, tuple[Callable[..., str], Any]] = {
         "sketch": (sketch.draw, book.figures.sketch),
         "plates": (plates.draw, book.figures.plates),
         "flow": (hydrograph.draw, book.figures.flow),
@@ -145,17 +147,19 @@ def stylesheets() -> tuple[list[weasyprint.CSS], FontConfiguration]:
     """Return the print style sheets and their fonts, parsed once in a process."""
     fonts = FontConfiguration()
     fetcher = OwnFetcher({})
-    return [
-        weasyprint.CSS(
-            string=Path(finders.find(name)).read_text(encoding="utf-8"),
-            font_config=fonts,
-            url_fetcher=fetcher,
-        )
-        for name in STYLESHEETS
-    ], fonts
+    sheets = [
+        weasyprint.CSS(string=text, font_config=fonts, url_fetcher=fetcher)
+        for text in stylesheet_texts()
+    ]
+    return sheets, fonts
 
 
-def add_scopes(document, _pdf) -> None:
+def stylesheet_texts() -> list[str]:
+    """Return the print style sheets, tokens first."""
+    return [Path(finders.find(name)).read_text(encoding="utf-8") for name in STYLESHEETS]
+
+
+def add_scopes(document: weasyprint.Document, _pdf: Any) -> None:
     """Write the scope of every header cell into its tag; the renderer keeps only the tag.
 
     Its cells still carry the tag's dictionary as ``mark``.

@@ -86,10 +86,9 @@ def figure_words(book: Yearbook) -> Words:
 def descriptions(book: Yearbook) -> dict[str, str]:
     """Return the alternative text of every figure by its name: what it shows, in sentences."""
     year, extremes = book.year.label, book.daily.extremes
+    earlier = book.daily.earlier_years
     with_earlier = (
-        _(" It is set against the range of {years}.").format(years=book.daily.earlier_years)
-        if book.daily.earlier_years
-        else ""
+        " " + _("Behind it the range of {years}.").format(years=earlier) if earlier else ""
     )
     return {
         "sketch": _(

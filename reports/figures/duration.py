@@ -1,19 +1,20 @@
 """The duration curve: the share of days on which a value is reached or exceeded."""
 
 import numpy as np
+from matplotlib.typing import LineStyleType
 
 from reports.figures import keys, style
 from reports.figures.inputs import DurationCurves, Words
 
 WIDTH_MM, HEIGHT_MM = 112, 66
-DASHES = (0, (5, 1.5))
+DASHES: LineStyleType = (0, (5, 1.5))
 
 
 def draw(curves: DurationCurves, words: Words) -> str:
     """Return this year's curve and that of the earlier years as SVG."""
     with style.styled():
         figure = style.sheet(WIDTH_MM, HEIGHT_MM)
-        axes = style.panel(figure, left=13, bottom=10, right=3, top=3)
+        axes = style.panel(figure, left=11, bottom=10, right=3, top=3)
         axes.set_xlim(0, 100)
         axes.set_xticks(range(0, 101, 10))
         axes.set_xlabel(words.percent_axis)

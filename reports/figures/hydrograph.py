@@ -1,6 +1,7 @@
 """The year's flow against the range of earlier years, with gaugings, estimates and gaps."""
 
 import numpy as np
+from matplotlib.axes import Axes
 
 from reports.figures import style, time_lines
 from reports.figures.inputs import FlowYear, Words
@@ -13,7 +14,7 @@ def draw(year: FlowYear, words: Words) -> str:
     """Return the hydrograph as SVG; logarithmic where no flow is zero and the range is wide."""
     with style.styled():
         figure = style.sheet(WIDTH_MM, HEIGHT_MM)
-        axes = style.panel(figure, left=13, bottom=9, right=29, top=3)
+        axes = style.panel(figure, left=11, bottom=9, right=29, top=3)
         _scale(axes, year, words)
         style.month_axis(axes, year.days, words)
         axes.set_ylabel(words.flow_axis)
@@ -27,7 +28,7 @@ def draw(year: FlowYear, words: Words) -> str:
         return style.svg(figure)
 
 
-def _scale(axes, year: FlowYear, words: Words) -> None:
+def _scale(axes: Axes, year: FlowYear, words: Words) -> None:
     """Choose the flow axis from everything that is drawn on it."""
     drawn = [year.flow_m3s, year.gauged_m3s]
     if year.earlier is not None:

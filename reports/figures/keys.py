@@ -1,10 +1,12 @@
 """The column of samples and words in the right margin of a figure."""
 
 from dataclasses import dataclass
+from typing import Any
 
 from matplotlib.axes import Axes
 from matplotlib.lines import Line2D
 from matplotlib.patches import Rectangle
+from matplotlib.typing import LineStyleType
 
 from reports.figures import style
 
@@ -20,14 +22,14 @@ class Entry:
     colour: str
     band: bool = False
     line: float = 0.0  # width in points; 0 draws none
-    dashes: tuple[float, tuple[float, ...]] | str = "-"
+    dashes: LineStyleType = "-"
     marker: str = ""
     fill: str = style.PAPER
 
 
 def draw(axes: Axes, entries: list[Entry], *, inside_mm: float = 0) -> None:
     """Draw the samples from the top down, beginning right of the axes or so far inside them."""
-    figure = axes.figure
+    figure: Any = axes.figure  # never a subfigure here
     width, height = figure.get_size_inches() * 72
     box = axes.get_position()
     x, y = box.x1 * width + 6 - inside_mm * 72 / 25.4, box.y1 * height - 5
@@ -39,9 +41,9 @@ def draw(axes: Axes, entries: list[Entry], *, inside_mm: float = 0) -> None:
             entry.words,
             va="top",
             fontsize=style.SMALL,
-            linespacing=1.1,
+            linespacing=1.25,
         )
-        y -= STEP_POINTS + entry.words.count("\n") * style.SMALL * 1.2
+        y -= STEP_POINTS + entry.words.count("\n") * style.SMALL * 1.35
 
 
 def _sample(entry: Entry, *, x: float, y: float, width: float, height: float) -> Line2D | Rectangle:

@@ -71,5 +71,6 @@ def _draw_level(axes: Axes, stage_m: float, text: str, *, below: bool = False) -
         va="top" if below else "bottom",
         color=style.WATER,
         fontsize=style.SMALL,
+        bbox={"facecolor": style.PAPER, "edgecolor": "none", "pad": 0.4},
         zorder=4,
     )

@@ -2,26 +2,29 @@
 
 import numpy as np
 from matplotlib.axes import Axes
+from matplotlib.typing import LineStyleType
 
 from reports.figures import keys, style
 from reports.figures.inputs import RatingCurve, RatingSheet, Words
 
 WIDTH_MM, HEIGHT_MM = 174, 94
-LINES = (  # told apart by dashes and by name, not by colour alone
+LINES: tuple[
+    tuple[str, LineStyleType], ...
+] = (  # told apart by dashes and by name, not by colour alone
     (style.WATER, "-"),
     (style.INK, (0, (5, 1.5))),
     (style.INK_SOFT, (0, (5, 1.5, 1, 1.5))),
     (style.WATER_MID, (0, (2, 1))),
 )
-EXTRAPOLATED = (0, (1, 1.5))
+EXTRAPOLATED: LineStyleType = (0, (1, 1.5))
 
 
 def draw(sheet: RatingSheet, words: Words) -> str:
     """Return both plots side by side as SVG, stage upright and flow across."""
     with style.styled():
         figure = style.sheet(WIDTH_MM, HEIGHT_MM)
-        left = style.panel(figure, left=13, bottom=10, right=99, top=7)
-        right = style.panel(figure, left=84, bottom=10, right=30, top=7)
+        left = style.panel(figure, left=11, bottom=10, right=100, top=7)
+        right = style.panel(figure, left=83, bottom=10, right=30, top=7)
         for axes, title in ((left, words.log_axes), (right, words.plain_axes)):
             axes.set_title(title, loc="left", fontsize=style.TEXT, fontweight=600, pad=5)
             axes.set_xlabel(words.flow_axis)
@@ -78,7 +81,7 @@ def _draw(axes: Axes, sheet: RatingSheet) -> None:
     )
 
 
-def _draw_curve(axes: Axes, curve: RatingCurve, *, colour: str, dashes) -> None:
+def _draw_curve(axes: Axes, curve: RatingCurve, *, colour: str, dashes: LineStyleType) -> None:
     """Draw one rating, dotted where it is extrapolated, over its band."""
     if curve.lower_m3s.size:
         axes.fill_betweenx(

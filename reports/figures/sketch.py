@@ -1,5 +1,7 @@
 """The location sketch: the station among its neighbours, to scale, north up."""
 
+from typing import Any
+
 import numpy as np
 from matplotlib.axes import Axes
 
@@ -61,6 +63,7 @@ def _mark(axes: Axes, *, x: float, y: float, name: str, half_km: float, main: bo
     axes.plot(
         x,
         y,
+        color=style.WATER,
         marker="^",
         markersize=7 if main else 5,
         markerfacecolor=style.WATER if main else style.PAPER,
@@ -87,7 +90,7 @@ def _scale_and_north(axes: Axes, half_km: float, words: Words) -> None:
     step = 10 ** np.floor(np.log10(rough))
     length = max(s * step for s in (1, 2, 5) if s * step <= rough)
     share = length / (2 * half_km)
-    place = {"transform": axes.transAxes, "zorder": 5}
+    place: dict[str, Any] = {"transform": axes.transAxes, "zorder": 5}
     axes.plot([0.05, 0.05 + share], [0.06, 0.06], color=style.INK, linewidth=1.6, **place)
     axes.text(0.05, 0.085, f"{length:g} km", va="bottom", fontsize=style.SMALL, **place)
     axes.annotate(

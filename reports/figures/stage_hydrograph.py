@@ -1,6 +1,7 @@
 """The year's stage: daily means within their daily range, staff readings beside them."""
 
 import numpy as np
+from matplotlib.axes import Axes
 
 from reports.figures import keys, style, time_lines
 from reports.figures.inputs import StageYear, Words
@@ -13,7 +14,7 @@ def draw(year: StageYear, words: Words) -> str:
     """Return the stage hydrograph as SVG, against the earlier range where one is given."""
     with style.styled():
         figure = style.sheet(WIDTH_MM, TALL_MM if year.earlier else HEIGHT_MM)
-        axes = style.panel(figure, left=13, bottom=9, right=29, top=3)
+        axes = style.panel(figure, left=11, bottom=9, right=29, top=3)
         style.month_axis(axes, year.days, words)
         axes.set_ylabel(words.stage_axis)
         axes.grid(axis="y")
@@ -31,7 +32,7 @@ def draw(year: StageYear, words: Words) -> str:
         return style.svg(figure)
 
 
-def _draw_daily_range(axes, year: StageYear) -> None:
+def _draw_daily_range(axes: Axes, year: StageYear) -> None:
     """Shade lowest to highest stage of each day."""
     axes.fill_between(
         style.day_numbers(year.days) + 0.5,

@@ -1,19 +1,20 @@
 """One style for every figure: colours of tokens.css, the report's font files, print size in mm."""
 
 import io
-import re
 from collections.abc import Iterator
 from contextlib import contextmanager
 from pathlib import Path
+from typing import Any
 
 import fontpkg_ibm_plex_sans_condensed as plex
 import matplotlib as mpl
 import numpy as np
 from matplotlib import font_manager
 from matplotlib.axes import Axes
+from matplotlib.axis import Axis
 from matplotlib.figure import Figure
 
-from reports.figures.inputs import Times, Words
+from reports.figures.inputs import Times, Values, Words
 
 INK = "#1b2429"
 INK_SOFT = "#4d5a61"
@@ -36,7 +37,7 @@ for _file in FONT_FILES.values():
 SMALL = 7.0  # points; ticks and direct labels
 TEXT = 7.5  # points; axis titles
 
-_SETTINGS = {
+_SETTINGS: Any = {
     "font.family": [plex.FAMILY],
     "font.size": SMALL,
     "axes.edgecolor": INK,
@@ -63,7 +64,6 @@ _SETTINGS = {
     "xtick.major.width": 0.5,
     "ytick.major.width": 0.5,
 }
-_WEIGHT_IN_FONT = re.compile(r"font: (\d+) (\d)")
 
 
 @contextmanager
@@ -97,8 +97,6 @@ def svg(figure: Figure) -> str:
     out = io.StringIO()
     figure.savefig(out, format="svg", transparent=True, metadata={"Date": None, "Creator": None})
     text = out.getvalue()
-    # The renderer reads size and family from the shorthand, not the weight.
-    text = _WEIGHT_IN_FONT.sub(r"font-weight: \1; font: \2", text)
     return text[text.index("<svg") :]
 
 
@@ -107,7 +105,7 @@ def number(value: float, words: Words) -> str:
     return f"{value:.10g}".replace(".", words.decimal_sign).replace("-", "−")
 
 
-def number_ticks(axis, words: Words) -> None:
+def number_ticks(axis: Axis, words: Words) -> None:
     """Print the numbers of an axis with the agency's decimal sign."""
     axis.set_major_formatter(lambda value, _position: number(value, words))
     axis.set_minor_locator(mpl.ticker.NullLocator())
@@ -135,25 +133,30 @@ def month_axis(axes: Axes, days: Times, words: Words) -> None:
     months = np.arange(first.astype("datetime64[M]"), last.astype("datetime64[M]"))
     starts = day_numbers(months.astype("datetime64[D]"))
     ends = np.append(starts[1:], day_numbers(last))
-    axes.set_xlim(day_numbers(first), day_numbers(last))
+    axes.set_xlim(starts[0], ends[-1])
     axes.set_xticks(starts[1:], [""] * (len(starts) - 1))
     axes.grid(axis="x")
     for month, start, end in zip(months, starts, ends, strict=True):
-        name = words.months[month.astype(int) % 12]
-        year = f"\n{month}"[:5] if month == months[0] or month.astype(int) % 12 == 0 else ""
-        axes.annotate(
-            name + year,
-            ((start + end) / 2, 0),
-            xycoords=("data", "axes fraction"),
-            xytext=(0, -4),
-            textcoords="offset points",
-            ha="center",
-            va="top",
-            fontsize=SMALL,
-            linespacing=1.25,
-        )
+        number = int(month.astype(int) % 12)
+        _below(axes, (start + end) / 2, words.months[number], down=10)
+        if month == months[0] or number == 0:
+            _below(axes, (start + end) / 2, str(month)[:4], down=19)
 
 
-def day_numbers(times: Times) -> np.ndarray:
+def _below(axes: Axes, x: float, text: str, *, down: float) -> None:
+    """Write a text centred under the time axis, its base line so many points below."""
+    axes.annotate(
+        text,
+        (x, 0),
+        xycoords=("data", "axes fraction"),
+        xytext=(0, -down),
+        textcoords="offset points",
+        ha="center",
+        va="baseline",
+        fontsize=SMALL,
+    )
+
+
+def day_numbers(times: Times | np.datetime64) -> Values:
     """Return days since 1970 as floats, the number line of every time axis."""
     return np.asarray(times).astype("datetime64[s]").astype(np.int64) / 86_400

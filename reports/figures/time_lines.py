@@ -2,11 +2,12 @@
 
 import numpy as np
 from matplotlib.axes import Axes
+from matplotlib.typing import LineStyleType
 
 from reports.figures import keys, style
 from reports.figures.inputs import EarlierRange, Flags, Times, Values, Words
 
-DASHES = (0, (2.2, 1.3))  # of every estimated line
+DASHES: LineStyleType = (0, (2.2, 1.3))  # of every estimated line
 
 
 def draw_earlier(axes: Axes, days: Times, earlier: EarlierRange) -> None:

@@ -505,8 +505,8 @@ class Sample:
                     on=date(2019, 9, 2),
                     laboratory="Towing tank at Long Mill",
                     certificate="T-2019-118",
-                    valid_ms="0.03–3.00",
-                    standard_error="0.004 m/s",
+                    valid_ms=f"0{self.sign}03–3{self.sign}00",
+                    standard_error=f"0{self.sign}004 m/s",
                     gaugings=7,
                 ),
             )
