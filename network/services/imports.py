@@ -20,7 +20,6 @@ from network.queries.series import operation_span
 from network.services import blocks, originals, profiles
 from network.services.acts import (
     Refusal,
-    lock_station,
     open_act,
     raise_record_version,
     withdraw,
@@ -153,8 +152,7 @@ def withdraw_import(*, logger_import: LoggerImport, by: Person, at: datetime, re
 
 
 def _locked(series: Series) -> Series:
-    """Lock the rows of a station and a series: a month's first block does not exist yet."""
-    lock_station(series.station)
+    """Lock the row of a series: a month's first block does not exist yet to be locked."""
     return Series.objects.select_for_update(no_key=True).get(pk=series.pk)
 
 
