@@ -21,6 +21,7 @@ class Agency:
     record_clock: tzinfo  # a fixed offset
     record_clock_text: str  # "UTC+01:00"
     day_starts_at: int  # hour of the record clock
+    every_day_needed: bool = True  # a missing day blanks mean and lowest of its month and year
 
 
 @dataclass(frozen=True, kw_only=True)

@@ -78,8 +78,8 @@ def figure_words(book: Yearbook) -> Words:
         year_highest=_("highest of the year"),
         year_lowest=_("lowest of the year"),
         cease_to_flow=_("flow ceases"),
-        log_axes=_("Logarithmic axes"),
-        plain_axes=_("Plain axes"),
+        log_axes=_("Stage, m (logarithmic axes)"),
+        plain_axes=_("Stage, m (plain axes)"),
     )
 
 

@@ -14,11 +14,11 @@ def draw(curves: DurationCurves, words: Words) -> str:
     """Return this year's curve and that of the earlier years as SVG."""
     with style.styled():
         figure = style.sheet(WIDTH_MM, HEIGHT_MM)
-        axes = style.panel(figure, left=11, bottom=10, right=3, top=3)
+        axes = style.panel(figure, left=11, bottom=10, right=3, top=6)
         axes.set_xlim(0, 100)
         axes.set_xticks(range(0, 101, 10))
         axes.set_xlabel(words.percent_axis)
-        axes.set_ylabel(words.stage_axis if curves.of_stage else words.flow_axis)
+        style.title(axes, words.stage_axis if curves.of_stage else words.flow_axis)
         values = np.concatenate([curves.value, curves.earlier_value])
         if not curves.of_stage and values.size and values.min() > 0:
             style.decades(axes, "y", lowest=values.min(), highest=values.max())

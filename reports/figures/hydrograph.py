@@ -14,10 +14,10 @@ def draw(year: FlowYear, words: Words) -> str:
     """Return the hydrograph as SVG; logarithmic where no flow is zero and the range is wide."""
     with style.styled():
         figure = style.sheet(WIDTH_MM, HEIGHT_MM)
-        axes = style.panel(figure, left=11, bottom=9, right=29, top=3)
+        axes = style.panel(figure, left=11, bottom=9, right=29, top=6)
         _scale(axes, year, words)
         style.month_axis(axes, year.days, words)
-        axes.set_ylabel(words.flow_axis)
+        style.title(axes, words.flow_axis)
         if year.earlier is not None:
             time_lines.draw_earlier(axes, year.days, year.earlier)
         time_lines.draw_missing(axes, year.days, np.isnan(year.flow_m3s), words)

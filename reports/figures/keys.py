@@ -42,6 +42,7 @@ def draw(axes: Axes, entries: list[Entry], *, inside_mm: float = 0) -> None:
             va="top",
             fontsize=style.SMALL,
             linespacing=1.25,
+            bbox={"facecolor": style.PAPER, "edgecolor": "none", "pad": 0.8},
         )
         y -= STEP_POINTS + entry.words.count("\n") * style.SMALL * 1.35
 

@@ -13,11 +13,11 @@ def draw(stack: PlateStack, words: Words) -> str:
     """Return the plates side by side against the stage scale as SVG."""
     with style.styled():
         figure = style.sheet(WIDTH_MM, HEIGHT_MM)
-        axes = style.panel(figure, left=11, bottom=2, right=2, top=2)
+        axes = style.panel(figure, left=9, bottom=1, right=2, top=6)
         axes.set_xlim(0, len(stack.plates) * 1.55 + 0.4)
         axes.set_xticks([])
         axes.spines["bottom"].set_visible(False)
-        axes.set_ylabel(words.stage_axis)
+        style.title(axes, words.stage_axis)
         style.number_ticks(axes.yaxis, words)
         axes.grid(axis="y")
         for place, plate in enumerate(stack.plates):

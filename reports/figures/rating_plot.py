@@ -26,9 +26,8 @@ def draw(sheet: RatingSheet, words: Words) -> str:
         left = style.panel(figure, left=11, bottom=10, right=100, top=7)
         right = style.panel(figure, left=83, bottom=10, right=30, top=7)
         for axes, title in ((left, words.log_axes), (right, words.plain_axes)):
-            axes.set_title(title, loc="left", fontsize=style.TEXT, fontweight=600, pad=5)
+            style.title(axes, title)
             axes.set_xlabel(words.flow_axis)
-        left.set_ylabel(words.stage_axis)
         _make_logarithmic(left, sheet)
         for axes in (left, right):
             _draw(axes, sheet)

@@ -14,9 +14,9 @@ def draw(year: StageYear, words: Words) -> str:
     """Return the stage hydrograph as SVG, against the earlier range where one is given."""
     with style.styled():
         figure = style.sheet(WIDTH_MM, TALL_MM if year.earlier else HEIGHT_MM)
-        axes = style.panel(figure, left=11, bottom=9, right=29, top=3)
+        axes = style.panel(figure, left=11, bottom=9, right=29, top=6)
         style.month_axis(axes, year.days, words)
-        axes.set_ylabel(words.stage_axis)
+        style.title(axes, words.stage_axis)
         axes.grid(axis="y")
         style.number_ticks(axes.yaxis, words)
         if year.earlier is not None:

@@ -92,6 +92,11 @@ def panel(figure: Figure, *, left: float, bottom: float, right: float, top: floa
     return axes
 
 
+def title(axes: Axes, text: str) -> None:
+    """Write what the upright axis counts above it, level and clear of its numbers."""
+    axes.set_title(text, loc="left", fontsize=TEXT, pad=5)
+
+
 def svg(figure: Figure) -> str:
     """Return the figure as SVG text, the same bytes for the same figure."""
     out = io.StringIO()
