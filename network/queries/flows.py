@@ -201,9 +201,9 @@ def _noted(inputs: StationInputs) -> MarkBits:
     for note in inputs.notes:
         touched = (edges[:-1] < note.end_s) & (edges[1:] > note.start_s)
         if note.cause in ICE_OR_BACKWATER:
-            bits[touched] |= Mark.ICE_OR_BACKWATER
+            bits[touched] |= np.uint8(Mark.ICE_OR_BACKWATER)
         if note.flows == Note.Flows.WITHHELD:
-            bits[touched] |= Mark.WITHHELD
+            bits[touched] |= np.uint8(Mark.WITHHELD)
     return bits
 
 
