@@ -10,7 +10,7 @@ from network.formats.faults import FileFault
 from network.formats.logger_csv import LoggerFile, read
 from network.models import Block, LoggerImport, Series
 from network.numerics.blocks import encode
-from network.numerics.readings import Readings, merge, no_readings, split_by_month
+from network.numerics.readings import Readings, merge, split_by_month
 from network.queries.blocks import month_of, months_between, read_months
 from network.services import originals, profiles
 
@@ -31,7 +31,13 @@ def merge_in(series: Series, readings: Readings) -> None:
     """Merge readings into the months of a locked series; what comes in wins over what is there."""
     parts = by_month(readings)
     there = read_months(series, months=list(parts))
-    _save(series, {month: merge(there.get(month, no_readings()), p) for month, p in parts.items()})
+    _save(
+        series,
+        {
+            month: merge(there[month], part) if month in there else part
+            for month, part in parts.items()
+        },
+    )
 
 
 def rebuild(series: Series, *, start: datetime, end: datetime) -> None:
@@ -58,7 +64,7 @@ def rebuilt_months(series: Series, *, months: list[date]) -> Months:
             continue
         for month, part in by_month(readings_in(read_again(logger_import))).items():
             if month in wanted:
-                rebuilt[month] = merge(rebuilt.get(month, no_readings()), part)
+                rebuilt[month] = merge(rebuilt[month], part) if month in rebuilt else part
     return rebuilt
 
 

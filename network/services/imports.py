@@ -1,6 +1,7 @@
 """Import logger files into a series: looked at first, taken whole or not at all, withdrawn."""
 
 from collections.abc import Sequence
+from concurrent.futures import ThreadPoolExecutor
 from dataclasses import dataclass
 from datetime import date, datetime
 from itertools import islice
@@ -115,23 +116,42 @@ def import_file(
         _refuse_known(series, found.sha256)
         if found.faults and not skip_faulty:
             raise FaultyRows(_faulty_sentence(found.faults), field="skip_faulty")
-        kept_as = received.keep(found.sha256)
-    with open_act(_("import logger file"), by=by, at=at, station=series.station):
-        locked = _locked(series)
-        _refuse_known(locked, found.sha256)
-        row = LoggerImport.objects.create(
-            series=locked,
-            profile=profile,
-            file=kept_as,
-            original_name=_last_part(original_name),
-            sha256=found.sha256,
-            recorded_at=at,
-            recorded_by=by,
-            **_counts(found),
-        )
-        ImportFault.objects.bulk_create(_fault_rows(row, found.faults), batch_size=2_000)
-        blocks.merge_in(locked, blocks.readings_in(found))
-        raise_record_version(series.station)
+        # The disk flushes the file while the months are packed; the row is committed after both.
+        with ThreadPoolExecutor(1) as disk:
+            keeping = disk.submit(received.keep, found.sha256)
+            with open_act(_("import logger file"), by=by, at=at, station=series.station):
+                row = _record(
+                    found, series=series, profile=profile, by=by, at=at, original_name=original_name
+                )
+                keeping.result()
+    return row
+
+
+def _record(
+    found: LoggerFile,
+    *,
+    series: Series,
+    profile: MappingProfile,
+    by: Person,
+    at: datetime,
+    original_name: str,
+) -> LoggerImport:
+    """Write the row of a file, its faults and its readings, within the open act."""
+    locked = _locked(series)
+    _refuse_known(locked, found.sha256)
+    row = LoggerImport.objects.create(
+        series=locked,
+        profile=profile,
+        file=originals.name_of(found.sha256),
+        original_name=_last_part(original_name),
+        sha256=found.sha256,
+        recorded_at=at,
+        recorded_by=by,
+        **_counts(found),
+    )
+    ImportFault.objects.bulk_create(_fault_rows(row, found.faults), batch_size=2_000)
+    blocks.merge_in(locked, blocks.readings_in(found))
+    raise_record_version(series.station)
     return row
 
 

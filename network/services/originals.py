@@ -54,14 +54,13 @@ class Receiving:
         """Return the place in the stream."""
         return self._stream.tell()
 
-    def keep(self, sha256: str) -> str:
-        """Keep the copy under its hash, once the stream was read to its end; return its name."""
+    def keep(self, sha256: str) -> None:
+        """Keep the copy under its hash, once the stream was read to its end."""
         self._copy.flush()
         os.fsync(self._copy.fileno())
         os.replace(self._copy.name, path_of(sha256))
         self.kept = True
         _flush_folder()
-        return name_of(sha256)
 
 
 @contextmanager
