@@ -5,13 +5,28 @@ from datetime import datetime
 
 import numpy as np
 
-from network.models import Curve, RatingPeriod, ShiftTable, Station
+from network.models import (
+    Curve,
+    CurvePoint,
+    CurveSegment,
+    RatingPeriod,
+    ShiftPoint,
+    ShiftTable,
+    Station,
+)
 from network.numerics import curves, rating
 from network.queries import in_force
 
 
 def kernel_curve(row: Curve) -> curves.Curve:
     """Build the kernel's curve of a rating version; raises sentences.Refused when it is none."""
+    return curve_of(row, row.segments.all(), row.points.all())
+
+
+def curve_of(
+    row: Curve, segments: Iterable[CurveSegment], points: Iterable[CurvePoint]
+) -> curves.Curve:
+    """Build the kernel's curve of a version from its rows, however they were read."""
     use = {
         "lowest_use_m": row.lowest_use_m,
         "highest_use_m": row.highest_use_m,
@@ -21,11 +36,11 @@ def kernel_curve(row: Curve) -> curves.Curve:
         "gauged_highest_m": row.gauged_highest_m,
     }
     if row.form == Curve.Form.SEGMENTS:
-        segments = sorted(row.segments.all(), key=lambda s: s.lower_stage_m)
+        segments = sorted(segments, key=lambda s: s.lower_stage_m)
         return curves.SegmentCurve(
             segments=[curves.Segment(s.lower_stage_m, s.c, s.h0_m, s.b) for s in segments], **use
         )
-    points = sorted(row.points.all(), key=lambda point: point.stage_m)
+    points = sorted(points, key=lambda point: point.stage_m)
     return curves.TableCurve(
         stages_m=np.array([point.stage_m for point in points]),
         flows_m3s=np.array([point.flow_m3s for point in points]),
@@ -48,7 +63,7 @@ def kernel_periods(rows: Iterable[RatingPeriod]) -> tuple[rating.RatingPeriod, .
         rating.RatingPeriod(
             in_force.seconds(row.effective_from),
             kernel_curve(row.curve) if row.curve else None,
-            [_shift_table(table) for table in _standing_tables(row)],
+            [shift_table(table, table.points.all()) for table in _standing_tables(row)],
         )
         for row in rows
     )
@@ -59,8 +74,9 @@ def _standing_tables(row: RatingPeriod) -> list[ShiftTable]:
     return sorted(tables, key=lambda table: table.effective_from)
 
 
-def _shift_table(row: ShiftTable) -> rating.ShiftTable:
-    points = sorted(row.points.all(), key=lambda point: point.stage_m)
+def shift_table(row: ShiftTable, points: Iterable[ShiftPoint]) -> rating.ShiftTable:
+    """Build the kernel's shift table from its rows, however they were read."""
+    points = sorted(points, key=lambda point: point.stage_m)
     return rating.ShiftTable(
         in_force.seconds(row.effective_from),
         np.array([point.stage_m for point in points]),
