@@ -18,7 +18,7 @@ from django.db.models.functions import Coalesce
 
 from network.models import Calibration, CalibrationPiece, Gauging, MeterPair
 from network.numerics.gauging_input import Meter
-from network.numerics.meter_rating import Piece, RatingChange, compare
+from network.numerics.meter_rating import Piece
 
 HOUR = timedelta(hours=1)
 DURATION = ExpressionWrapper(F("ended_at") - F("started_at"), output_field=DurationField())
@@ -111,21 +111,16 @@ def before(calibration: Calibration) -> Calibration | None:
     return rows.prefetch_related("pieces").order_by("effective_from").last()
 
 
-def change_since(older: Calibration, newer: Calibration) -> RatingChange:
-    """Compare two calibrations at five speeds; raises sentences.Refused where one is no rating."""
-    return compare(kernel_pieces(older), kernel_pieces(newer))
-
-
 def made_between(older: Calibration, newer: Calibration) -> "QuerySet[Gauging]":
     """Return the signed gaugings that rest on the older calibration, up to the newer one."""
     rows = Gauging.objects.filter(calibration=older, discharge_m3s__isnull=False)
     return rows.filter(started_at__lt=newer.effective_from).order_by("started_at")
 
 
-def with_rating(meter: Meter | None, calibration: Calibration) -> Meter:
+def with_rating(meter: Meter, calibration: Calibration) -> Meter:
     """Return a meter with the pieces and range of another calibration."""
     return replace(
-        meter or Meter(),
+        meter,
         pieces=kernel_pieces(calibration),
         lowest_ms=calibration.lowest_velocity_ms,
         highest_ms=calibration.highest_velocity_ms,

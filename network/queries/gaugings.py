@@ -121,17 +121,6 @@ def of_stored(gauging: Gauging, *, agency: Agency | None = None) -> Answer:
     return answer(of_gauging(gauging), agency=agency, leave_out=gauging.pk)
 
 
-def would_become(gauging: Gauging, calibration: Calibration) -> float | None:
-    """Compute the discharge of a stored gauging by another calibration, None where none results."""
-    sheet = of_gauging(gauging)
-    facts = station_facts.at(gauging.station, sheet.heading.mid_time)
-    meter = calibrations.with_rating(None, calibration)
-    preview = kernel.preview(
-        kernel_sheet(sheet, facts, meter), settings_of(clock.agency(), rules())
-    )
-    return preview.result.discharge_m3s if preview.result and not preview.faults else None
-
-
 def kernel_sheet(sheet: FieldSheet, facts: StationFacts, meter: Meter | None) -> Sheet:
     """Give the kernel's sheet; plate readings become stages by the zeros in force."""
     heading = sheet.heading
