@@ -1,6 +1,6 @@
 """The network app and the staff site."""
 
-from django.apps import AppConfig
+from django.apps import AppConfig, apps
 from django.contrib.admin.apps import AdminConfig
 from django.db.models.signals import post_migrate
 from django.utils.translation import gettext_lazy as _
@@ -17,10 +17,16 @@ class NetworkConfig(AppConfig):
         from network import checks  # noqa: F401  (registers itself; needs loaded apps)
         from network.services.roles import ensure_roles
 
-        post_migrate.connect(ensure_roles, sender=self)
+        # Auth comes after our two apps, so that their permissions exist by then.
+        post_migrate.connect(ensure_roles, sender=apps.get_app_config("auth"))
 
 
 class StaffSiteConfig(AdminConfig):
     """The Django admin, with the agency's own site as its default."""
 
     default_site = "network.admin.site.StaffSite"
+
+    def ready(self) -> None:
+        """Let the site come first, then the books, which register with it."""
+        super().ready()
+        from network.admin import books  # noqa: F401  (needs the finished site)

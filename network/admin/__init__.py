@@ -1,1 +1,1 @@
-"""The staff site: forms and lists over the books."""
+"""The staff site: forms and lists over the books, one module for each noun."""

@@ -163,7 +163,6 @@ FILE_UPLOAD_PERMISSIONS = 0o640
 
 # --- static files, long work, mail --------------------------------------------------------------
 STATIC_URL = "static/"
-STATIC_ROOT = DATA_DIR / "static"
 MEDIA_URL = "media/"
 STORAGES = {
     "default": {"BACKEND": "django.core.files.storage.FileSystemStorage"},

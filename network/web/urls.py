@@ -1,6 +1,10 @@
 """Addresses of the network's own pages."""
 
-from django.urls import URLPattern
+from django.urls import path
+
+from network.web.files import stored_file
 
 app_name = "network"
-urlpatterns: list[URLPattern] = []
+urlpatterns = [
+    path("media/<path:name>", stored_file, name="file"),
+]

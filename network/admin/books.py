@@ -1,0 +1,27 @@
+"""All nouns of the staff site, loaded once the site itself stands; a new module is named here."""
+
+from network.admin import (
+    acts,
+    agency,
+    gauges,
+    instruments,
+    mapping_profiles,
+    people,
+    records,
+    safety,
+    statements,
+    stations,
+)
+
+__all__ = [
+    "acts",
+    "agency",
+    "gauges",
+    "instruments",
+    "mapping_profiles",
+    "people",
+    "records",
+    "safety",
+    "statements",
+    "stations",
+]
