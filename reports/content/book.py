@@ -49,7 +49,7 @@ def _book(data: YearData, edition: particulars.Edition, language: str) -> Yearbo
         figures=drawings.figures(data),
         gaugings=field_work.gaugings(data),
         visits=beside.visits(data),
-        level_checks=(),
+        level_checks=field_work.level_checks(data),
         calibrations=field_work.calibrations(data),
         corrections=beside.corrections(data),
         completeness=facts.completeness(data),
@@ -62,7 +62,7 @@ def _book(data: YearData, edition: particulars.Edition, language: str) -> Yearbo
 def _unknown(data: YearData, percent: float) -> str:
     if percent <= 0:
         return ""
-    return _("For {percent} % of the volume no uncertainty is stated.").format(
+    return _("Share of the volume without a stated uncertainty: {percent} %.").format(
         percent=data.printer.fixed(percent, 1)
     )
 

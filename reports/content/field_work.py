@@ -5,11 +5,12 @@ from dataclasses import dataclass
 from datetime import datetime
 
 import numpy as np
+from django.utils.translation import gettext as _
 
 from network.models import Calibration, Gauging, LevelCheck
 from network.numerics.arrays import Floats
 from network.numerics.rating import rate
-from network.queries import in_force
+from network.queries import in_force, levels
 from network.queries.station_inputs import rating_periods
 from reports import particulars as p
 from reports.content.particulars import local_day, people, rating_label, rating_rows
@@ -135,3 +136,24 @@ def level_check_rows(data: YearData) -> list[LevelCheck]:
     )
     return list(rows.prefetch_related("party", "sights").order_by("levelled_at"))
 
+
+def level_checks(data: YearData) -> tuple[p.LevelCheck, ...]:
+    """Return the level checks of the year with what they closed to."""
+    return tuple(_level_check(data, row) for row in level_check_rows(data))
+
+
+def _level_check(data: YearData, row: LevelCheck) -> p.LevelCheck:
+    book = levels.reduction_of(row).book
+    fixed = data.printer.fixed
+    if row.adopted_at:
+        outcome = _("closes; new plate zeros adopted")
+    else:
+        outcome = _("closes") if book.closes else _("does not close")
+    return p.LevelCheck(
+        on=local_day(data, row.levelled_at),
+        party=people(row.party.all()),
+        setups=book.set_ups,
+        misclosure_mm=fixed(book.misclosure_mm, 1, plus=True),
+        allowed_mm=fixed(book.limit_mm, 1),
+        outcome=outcome,
+    )

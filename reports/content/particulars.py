@@ -36,6 +36,7 @@ def agency(data: YearData) -> p.Agency:
         record_clock=data.clock,
         record_clock_text=str(data.clock),
         day_starts_at=own.day_starts_at_hour,
+        every_day_needed=own.months_need_every_day,
     )
 
 

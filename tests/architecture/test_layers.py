@@ -36,6 +36,7 @@ MAY_IMPORT = {
         "network.formats",
         "network.services.acts",
         "network.services.jobs",
+        "network.templatetags",
     ],
     "reports.figures": ["network.numerics"],
 }
@@ -104,7 +105,7 @@ WRITES = {
 }
 
 
-# Calls of these names that write no row: a workbook or a PDF saved, a registry row saved by the admin.
+# Calls of these names that write no row: a workbook or a PDF saved, a row the admin saves.
 NOT_A_ROW: set[str] = set()  # e.g. "network/formats/gauging_sheet.py:workbook.save"
 
 
