@@ -64,6 +64,17 @@ def record_profile(
     return profile
 
 
+def copy_profile(*, profile: MappingProfile, name: str, by: Person, at: datetime) -> MappingProfile:
+    """Record a copy of a profile under another name; the copy may be changed until it is used."""
+    values = {
+        field.name: getattr(profile, field.name)
+        for field in MappingProfile._meta.concrete_fields
+        if not field.primary_key
+    }
+    copy = MappingProfile()
+    return record_profile(profile=copy, by=by, at=at, values={**values, "name": name.strip()})
+
+
 def said(sentence: str) -> str:
     """Return a sentence of the file reader in the user's language."""
     if not isinstance(sentence, Sentence):
