@@ -11,6 +11,7 @@ from network.models import Agency, MeterPair, Person, WorkingRules
 START = datetime(2024, 3, 5, 12, 0, tzinfo=UTC)
 # What the kinds of the fields alone do not tell.
 SPECIAL = {
+    "Note": lambda: {"flows": "withheld"},
     "Calibration": lambda: {"instrument": a_row(model_named("Instrument"))},
     "VisitReading": lambda: {"plate": a_row(model_named("StaffPlate")), "reading_m": 1.0},
     "FeedLink": lambda: {"secret_sha256": uuid.uuid4().hex},
