@@ -80,18 +80,20 @@ class _Opened:
 def _whole_units(values_m: Floats) -> tuple[Seconds, int]:
     if len(values_m) and np.abs(values_m).max() > FARTHEST_M:
         raise ReadingsError("A value lies beyond 100 km above or below zero.")
-    fine = np.rint(values_m * 10**FINE_DECIMALS).astype(np.int64)
-    if (fine % 10).any():
-        return fine, FINE_DECIMALS
-    return fine // 10, COARSE_DECIMALS
+    fine = np.rint(values_m * 10**FINE_DECIMALS)
+    coarse = np.rint(values_m * 10**COARSE_DECIMALS)
+    if (coarse * 10 != fine).any():
+        return fine.astype(np.int64), FINE_DECIMALS
+    return coarse.astype(np.int64), COARSE_DECIMALS
 
 
 def _runs(values: npt.NDArray[np.integer]) -> tuple[Unsigned, Unsigned]:
     """Give each run's value and length."""
+    if not len(values):
+        return np.empty(0, np.uint32), np.empty(0, np.uint32)
     changes = np.flatnonzero(values[1:] != values[:-1]) + 1
-    starts = np.append(0, changes) if len(values) else changes
-    lengths = np.diff(np.append(starts, len(values)))
-    return values[starts].astype(np.uint32), lengths.astype(np.uint32)
+    edges = np.concatenate(([0], changes, [len(values)]))
+    return values[edges[:-1]].astype(np.uint32), (edges[1:] - edges[:-1]).astype(np.uint32)
 
 
 def _pack(values: Unsigned) -> bytes:
