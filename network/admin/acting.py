@@ -31,6 +31,7 @@ from django.db import connection, models, transaction
 from django.http import HttpRequest, HttpResponse, HttpResponseRedirect
 from django.urls import reverse
 from django.utils import timezone
+from django.utils.text import capfirst
 from django.utils.translation import gettext as _
 
 from network.admin.children import kept_rows, place
@@ -85,6 +86,7 @@ class StaffAdmin(FieldParts, TrailPage, VerbPages, admin.ModelAdmin):
     actions = None
     list_per_page = 50
     show_full_result_count = False
+    show_facets = admin.ShowFacets.NEVER
 
     def has_delete_permission(self, request: HttpRequest, obj: Any = None) -> bool:
         """Delete nothing: a mistake is withdrawn, a person or a plate taken out of service."""
@@ -106,6 +108,11 @@ class StaffAdmin(FieldParts, TrailPage, VerbPages, admin.ModelAdmin):
             return row
         rows = type(row)._base_manager.select_for_update(of=("self",))
         return rows.filter(pk=row.pk).first()
+
+    def changelist_view(self, request: HttpRequest, extra_context: Any = None) -> HttpResponse:
+        """Head the list by what it holds."""
+        title = {"title": capfirst(str(self.opts.verbose_name_plural))}
+        return super().changelist_view(request, {**title, **(extra_context or {})})
 
     def changeform_view(
         self,

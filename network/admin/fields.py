@@ -11,12 +11,13 @@ from django.core.exceptions import ValidationError
 from django.db import models
 from django.utils import timezone
 from django.utils.formats import get_format
+from django.utils.text import capfirst
 from django.utils.translation import gettext_lazy as _
 
 from network.queries import clock
 
 # One sign at most, one decimal point or comma at most; keypads give a hyphen, papers a minus.
-NUMBER = re.compile(r"([+−-]?)(\d+(?:[.,]\d*)?|[.,]\d+)")
+NUMBER = re.compile(r"([+−-]?)([0-9]+(?:[.,][0-9]*)?|[.,][0-9]+)")
 TIME_FORMATS = ["%H:%M", "%H%M", "%H.%M", "%H:%M:%S"]
 DAY = timedelta(days=1)
 
@@ -30,7 +31,8 @@ BELOW_ZERO = re.compile(
 def may_be_negative(field: models.Field) -> bool:
     """Tell whether a number may lie below zero, by its kind and its name."""
     if isinstance(field, models.FloatField):
-        return BELOW_ZERO.search(field.name) is not None and not field.name.startswith("standard")
+        size = "uncertainty" in field.name or "standard" in field.name
+        return BELOW_ZERO.search(field.name) is not None and not size
     return not type(field).__name__.startswith("Positive")
 
 
@@ -68,7 +70,7 @@ class DecimalTextField(forms.FloatField):
             raise ValidationError(
                 _("%(label)s: “%(value)s” is not a number. Write it like 1.23 or 1,23."),
                 code="invalid",
-                params={"label": self.label or _("This field"), "value": value},
+                params={"label": capfirst(self.label or _("this field")), "value": value},
             )
         sign, digits = found.groups()
         size = float(digits.replace(",", "."))

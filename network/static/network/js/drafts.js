@@ -135,12 +135,11 @@
   };
 
   forgetSaved();
-  addEventListener("load", () => {
-    document.querySelectorAll("form[data-once]").forEach((form) => {
-      if (form.elements.form_id) draftKeeping(form);
-      sendOnce(form);
-    });
-    const section = document.getElementById("unfinished");
-    if (section) listUnfinished(section);
+  document.querySelectorAll("form[data-once]").forEach((form) => {
+    sendOnce(form);
+    // Rows are added by Django's script, whose buttons stand a moment after the page has loaded.
+    if (form.elements.form_id) addEventListener("load", () => setTimeout(draftKeeping, 50, form));
   });
+  const section = document.getElementById("unfinished");
+  if (section) listUnfinished(section);
 })();
