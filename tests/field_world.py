@@ -10,6 +10,7 @@ from network.queries.field_sheets import FieldSheet, Heading, StageRow
 from network.services import calibrations, instruments, ratings
 
 NOON = datetime(2024, 5, 14, 12, tzinfo=UTC)
+HOUR = timedelta(hours=1)
 EARLY = datetime(2020, 1, 1, tzinfo=UTC)
 
 

@@ -76,14 +76,14 @@ class StationFacts:
 
 
 def at(station: Station, instant: datetime) -> StationFacts:
-    """Read the facts of a station at an instant in one query."""
+    """Read the facts of a station at an instant in one query; of the station its key suffices."""
     rows: dict[str, list[Any]] = {}
     for kind, label, since, key, *numbers in _query(station, instant):
         rows.setdefault(kind, []).append((label, since, key, numbers))
     zeros = {
         key: numbers[0] for _l, _s, key, numbers in rows.get("plate", ()) if numbers[0] is not None
     }
-    if "curve" not in rows or not station.is_rated:
+    if "curve" not in rows:
         return StationFacts(instant, plate_zeros_m=zeros)
     (form, _since, _key, numbers), (number, *_rest) = rows["curve"][0], rows["version"][0]
     curve = curves.curve_of(
@@ -117,7 +117,8 @@ def _query(station: Station, instant: datetime) -> QuerySet[Any]:
     tables = Q(table__period=period, table__withdrawn_at__isnull=True)
     then = PlateZero.objects.standing().filter(plate=OuterRef("plate"), effective_from__lte=instant)
     in_force_then = Subquery(then.order_by("-effective_from").values("pk")[:1])
-    version = Curve.objects.filter(pk=curve)
+    rated = Curve.objects.filter(station__unrated_because="")
+    version = rated.exclude(station__kind=Station.Kind.STAGE_ONLY).filter(pk=curve)
     return _rows(version, "curve", instant, *USE, label="form").union(
         _rows(version, "version", instant, label="number"),
         _rows(CurveSegment.objects.filter(curve=curve), "segment", instant, *SEGMENT),
