@@ -12,9 +12,8 @@ from django.db import connections
 
 from network.models import Act, Block, ImportFault, LoggerImport, OperationPeriod, Station
 from network.queries import blocks as stored
-from network.services import imports, originals
+from network.services import blocks, imports, originals
 from network.services.acts import Refusal
-from network.services.blocks import months_that_differ
 from tests.records import (
     AT,
     START,
@@ -110,7 +109,7 @@ def test_a_withdrawn_import_leaves_the_bytes_of_never_having_imported_it(into, k
     for text in texts[:withdrawn] + texts[withdrawn + 1 :]:
         take(text, **never)
     assert packed(into["series"]) == packed(never["series"])
-    assert months_that_differ(into["series"]) == []
+    assert blocks.months_that_differ(into["series"]) == []
     row = LoggerImport.objects.get(pk=rows[withdrawn].pk)
     assert (row.withdrawn_by, row.withdrawn_reason) == (keeper, "wrong logger")
 
@@ -154,7 +153,7 @@ def test_a_block_changed_behind_the_books_is_found(into):
     february = Block.objects.get(series=into["series"], month=date(2024, 2, 1))
     january = Block.objects.get(series=into["series"], month=date(2024, 1, 1))
     Block.objects.filter(pk=february.pk).update(data=january.data)
-    assert months_that_differ(into["series"]) == [date(2024, 2, 1)]
+    assert blocks.months_that_differ(into["series"]) == [date(2024, 2, 1)]
 
 
 FAULTY = FIRST.replace("1.002", "wet").replace("1.004", "NaN")
@@ -352,14 +351,21 @@ class TestTwoAtOnce:
             thread.join()
         return errors
 
-    def test_two_files_of_one_month_both_come_in(self, into):
+    def test_two_files_of_one_month_both_come_in(self, into, monkeypatch):
+        save = blocks._save
+
+        def save_slowly(*args):
+            time.sleep(0.3)  # long enough for the other to read the month it would then lose
+            save(*args)
+
+        monkeypatch.setattr(blocks, "_save", save_slowly)
         odd = logger_text([1.5] * 200, start=START - timedelta(days=20), step=timedelta(hours=2))
         even = logger_text([1.6] * 200, start=START - timedelta(days=20, hours=1),
                            step=timedelta(hours=2))  # fmt: skip
         errors = self._both([lambda: take(odd, **into), lambda: take(even, **into)])
         assert errors == []
         assert len(values(into["series"])) == 400
-        assert months_that_differ(into["series"]) == []
+        assert blocks.months_that_differ(into["series"]) == []
 
     def test_the_same_file_twice_at_once_comes_in_once(self, into):
         errors = self._both([lambda: take(FIRST, **into)] * 2)
