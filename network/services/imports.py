@@ -5,7 +5,7 @@ from concurrent.futures import ThreadPoolExecutor
 from dataclasses import dataclass
 from datetime import date, datetime
 from itertools import islice
-from typing import BinaryIO, cast
+from typing import Any, BinaryIO, cast
 
 import numpy as np
 from django.utils.translation import gettext as _
@@ -224,7 +224,7 @@ def _faulty_sentence(faults: Sequence[RowFault]) -> str:
     ) % {"count": len(faults), "first": first + ("; …" if len(faults) > FAULTS_NAMED else "")}
 
 
-def _counts(found: LoggerFile) -> dict[str, int | datetime]:
+def _counts(found: LoggerFile) -> dict[str, Any]:
     return {
         "rows_read": found.rows_read,
         "rows_kept": len(found.times_s),
