@@ -55,7 +55,7 @@ def _keep(station: Station, year: int, *, version: int) -> None:
     days = flows.days_of(station, first, last)
     missing = int(np.count_nonzero(days.marks & Mark.MISSING))
     with transaction.atomic():
-        locked = Station.objects.select_for_update().get(pk=station.pk)
+        locked = Station.objects.select_for_update(no_key=True).get(pk=station.pk)
         if locked.record_version != version:
             return  # an act came between; the next refresh computes it anew
         StationYear.objects.update_or_create(

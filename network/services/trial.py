@@ -95,7 +95,7 @@ def before_and_after(
 def confirm(station: Station, act: Callable[[], Any], *, seen: str) -> Any:
     """Do the act if the first side is still the one that was shown; refuse if it moved."""
     with transaction.atomic():
-        Station.objects.select_for_update().get(pk=station.pk)
+        Station.objects.select_for_update(no_key=True).get(pk=station.pk)
         if fingerprint(load(station, *_span(station))) != seen:
             raise Refusal(
                 _("The record changed since this was shown. Look at the differences again.")

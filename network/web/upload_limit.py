@@ -17,7 +17,7 @@ class LimitedUploadHandler(FileUploadHandler):
         """Pass the chunk on to the next handler, or stop the upload."""
         self.received += len(raw_data)
         if self.received > settings.UPLOAD_LIMIT_BYTES:
-            raise StopUpload(connection_reset=True)
+            raise StopUpload(connection_reset=False)  # so that the browser gets the sentence
         return raw_data
 
     def file_complete(self, file_size: int) -> None:

@@ -4,7 +4,8 @@ from typing import Any
 
 from django.core.management.base import BaseCommand, CommandError, CommandParser
 
-from network.models import Station
+from network.queries.series import Unknown
+from network.queries.stations import stations_named
 from network.services import station_years
 
 
@@ -20,10 +21,10 @@ class Command(BaseCommand):
 
     def handle(self, *args: Any, codes: list[str], check: bool, **options: Any) -> None:
         """Work through the stations, one line each."""
-        stations = Station.objects.filter(code__in=codes) if codes else Station.objects.all()
-        unknown = set(codes) - {station.code for station in stations}
-        if unknown:
-            raise CommandError(f"There is no station {', '.join(sorted(unknown))}.")
+        try:
+            stations = stations_named(codes)
+        except Unknown as unknown:
+            raise CommandError(str(unknown)) from unknown
         different = 0
         for station in stations:
             if check:
