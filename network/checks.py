@@ -59,7 +59,7 @@ def print_libraries(**_options: Any) -> list[CheckMessage]:
 @register(Tags.files, deploy=True)
 def folders_can_be_written(**_options: Any) -> list[CheckMessage]:
     """Refuse a deployment that cannot keep what people hand in or what it issues."""
-    folders = [Path(settings.DATA_DIR), Path(settings.MEDIA_ROOT), Path(settings.EDITIONS_ROOT)]
+    folders = [Path(settings.DATA_DIR), Path(settings.MEDIA_ROOT)]
     return [
         Error(
             f"The folder {folder} cannot be written.",

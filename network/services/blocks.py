@@ -1,6 +1,6 @@
 """Packed months: readings merged in, months rebuilt from the original files, both compared."""
 
-from collections.abc import Iterable, Iterator
+from collections.abc import Iterator
 from datetime import UTC, date, datetime
 
 import numpy as np
@@ -122,14 +122,15 @@ def _ends(series: Series) -> tuple[datetime, datetime] | None:
 
 def _save(series: Series, months: Months) -> None:
     Block.objects.bulk_create(
-        _packed(series, months.items()),
+        packed(series, months),
         update_conflicts=True,
         unique_fields=["series", "month"],
         update_fields=["data", "count", "first_at", "last_at"],
     )
 
 
-def _packed(series: Series, months: Iterable[tuple[date, Readings]]) -> list[Block]:
+def packed(series: Series, months: Months) -> list[Block]:
+    """Return the unsaved blocks of a series for its months."""
     return [
         Block(
             series=series,
@@ -139,7 +140,7 @@ def _packed(series: Series, months: Iterable[tuple[date, Readings]]) -> list[Blo
             first_at=instant(readings.times_s[0]),
             last_at=instant(readings.times_s[-1]),
         )
-        for month, readings in months
+        for month, readings in months.items()
     ]
 
 
