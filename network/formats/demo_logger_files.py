@@ -7,8 +7,6 @@ from zoneinfo import ZoneInfo
 from network.formats.demo_field_rows import LoggerFile
 from network.formats.logger_profile import UNITS_PER_M, Profile
 
-ISO_UTC = "%Y-%m-%dT%H:%M:%SZ"
-
 
 def write_logger_file(file: LoggerFile, *, times_s: Sequence[int], raw_m: Sequence[float]) -> bytes:
     """Return the bytes of a logger file: heading, rows in its clock and unit, faulty rows.
@@ -41,23 +39,34 @@ def profile_of(file: LoggerFile) -> Profile:
 
 
 def _rows(file: LoggerFile, readings: Sequence[tuple[int, float]]) -> Iterator[str]:
+    cells = [_column(file, name, readings) for name in file.columns]
+    faulty = {row.before_row: row.text for row in file.faulty_rows}
+    for n, row in enumerate(zip(*cells, strict=True)):
+        if n in faulty:
+            yield faulty[n]
+        yield file.delimiter.join(row)
+
+
+def _column(file: LoggerFile, name: str, readings: Sequence[tuple[int, float]]) -> list[str]:
+    """Write one column; temperature and battery nobody reads here: plain waves will do."""
+    if name == "raw":
+        scale = UNITS_PER_M[file.unit]
+        return [_number(raw_m * scale, decimals=file.decimals, file=file) for _, raw_m in readings]
     clock: tzinfo = timezone(timedelta(minutes=file.utc_offset_minutes))
     if file.zone:
         clock = ZoneInfo(file.zone)
-    time_format = ISO_UTC if file.time_format == "ISO" else file.time_format
-    faulty = {row.before_row: row.text for row in file.faulty_rows}
-    for n, (at_s, raw_m) in enumerate(readings):
-        if n in faulty:
-            yield faulty[n]
-        at = datetime.fromtimestamp(at_s, UTC).astimezone(clock)
-        cells = {
-            "time": at.strftime(time_format),
-            "raw": _number(raw_m * UNITS_PER_M[file.unit], decimals=file.decimals, file=file),
-            # what else loggers write: nobody reads it here, so plain waves will do
-            "temperature": _number(12 + 9 * _wave(at.timetuple().tm_yday), decimals=1, file=file),
-            "battery": _number(12.4 + 0.3 * _wave(at.timetuple().tm_yday), decimals=1, file=file),
-        }
-        yield file.delimiter.join(cells[column] for column in file.columns)
+    if name == "time" and file.time_format == "ISO":
+        return [_iso(at_s) for at_s, _ in readings]
+    times = [datetime.fromtimestamp(at_s, UTC).astimezone(clock) for at_s, _ in readings]
+    if name == "time":
+        return [at.strftime(file.time_format) for at in times]
+    middle, swing = {"temperature": (12.0, 9.0), "battery": (12.4, 0.3)}[name]
+    waves = [middle + swing * _wave(at.timetuple().tm_yday) for at in times]
+    return [_number(value, decimals=1, file=file) for value in waves]
+
+
+def _iso(at_s: int) -> str:
+    return f"{datetime.fromtimestamp(at_s, UTC).replace(tzinfo=None).isoformat()}Z"
 
 
 def _wave(day_of_year: int) -> float:

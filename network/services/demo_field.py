@@ -177,7 +177,7 @@ def make_gaugings(truth: Truth, instruments: Instruments) -> tuple[MadeGauging, 
 
 def _plan(truth: Truth, rule: GaugingRule, at: datetime) -> Gauging:
     wading = truth.flow_at(at) < rule.wade_below_m3s
-    deep = _section(truth, at).depth_m >= rule.two_points_from_m
+    deep = section_at(truth, at).depth_m >= rule.two_points_from_m
     return Gauging(
         at=at,
         how="wading" if wading else rule.above,
@@ -188,7 +188,8 @@ def _plan(truth: Truth, rule: GaugingRule, at: datetime) -> Gauging:
     )
 
 
-def _section(truth: Truth, at: datetime) -> Section:
+def section_at(truth: Truth, at: datetime) -> Section:
+    """Return the gauging section with the water that runs at an instant."""
     flow = truth.station.flow
     form = float(stream(truth.seed, f"{truth.station.station.code} bed").random())
     return Section(flow.width_m, flow.depth_m, form).at(truth.flow_at(at) / flow.at_flow_m3s)
@@ -198,7 +199,7 @@ def _gauging(truth: Truth, *, plan: Gauging, instruments: Instruments) -> MadeGa
     rng = stream(truth.seed, f"{truth.station.station.code} gauging {seconds(plan.at)}")
     ended = plan.at + timedelta(minutes=round(plan.verticals * 2.5))
     middle = plan.at + (ended - plan.at) / 2
-    section = _section(truth, middle)
+    section = section_at(truth, middle)
     if plan.ice_m:
         section = Section(section.width_m, section.depth_m * ICE_DEPTH_FACTOR, section.form)
     calibration = calibration_at(instruments, pair=plan.meter, at=plan.at)

@@ -147,8 +147,8 @@ def _truth(scenario: Scenario, station: Station, *, time_s: Seconds, flow_m3s: F
 def rating_periods(station: Station) -> tuple[RatingPeriod, ...]:
     """Return the ratings in force as the kernel takes them; a lake's outlet curve for a lake."""
     if station.outlet_curve:
-        return (RatingPeriod(0, _curve(station.outlet_curve)),)
-    curves = {row.label: _curve(row) for row in station.curves}
+        return (RatingPeriod(0, curve_of(station.outlet_curve)),)
+    curves = {row.label: curve_of(row) for row in station.curves}
     return tuple(
         RatingPeriod(
             seconds(row.effective_from),
@@ -164,7 +164,8 @@ def _shift_table(row: ShiftRow) -> ShiftTable:
     return ShiftTable(seconds(row.at), stages_m, shifts_m, linear_to_next=row.to_next == "linear")
 
 
-def _curve(row: CurveRow) -> Curve:
+def curve_of(row: CurveRow) -> Curve:
+    """Return a curve of the scenario as the kernel takes it."""
     if row.table:
         stages_m, flows_m3s = np.array(row.table).T
         return TableCurve(
