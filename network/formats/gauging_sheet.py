@@ -77,6 +77,7 @@ class GaugingBook:
     remarks: str = ""
     stages: tuple[SheetStage, ...] = ()
     rows: tuple[SheetRow, ...] = ()
+    signed_m3s: Number = None  # the result as signed; written, never read back
 
 
 @dataclass(frozen=True)

@@ -11,6 +11,7 @@ METER, SPIN_TEST, REMARKS = "B14", "B15", "B16"
 STAGE_HEADER = 18
 STAGE_ROWS = range(19, 31)
 RESULTS = {"area": "E5", "mid": "E6", "mean": "E7", "velocity": "E8"}
+SIGNED_RESULT = "E11"
 
 # Page "Verticals": one line an edge or a vertical, in the order measured.
 FIRST_ROW, LAST_ROW = 4, 83

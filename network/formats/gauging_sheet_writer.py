@@ -91,6 +91,10 @@ def _write_head(page: Worksheet, book: GaugingBook, tables: CheckTables, words: 
     _numbers(page, [layout.SPIN_TEST], words, least=0)
     _write_stages(page, book, tables, words)
     _write_results(page, words)
+    if book.signed_m3s is not None:
+        cell = layout.SIGNED_RESULT
+        page[f"D{cell[1:]}"], page[cell] = words(_("discharge as signed, m³/s")), book.signed_m3s
+        page[cell].number_format = "0.000"
     page.column_dimensions["A"].width, page.column_dimensions["B"].width = 24, 30
     page.column_dimensions["D"].width, page.column_dimensions["E"].width = 34, 14
 

@@ -4,7 +4,7 @@ from collections.abc import Sequence
 from dataclasses import dataclass
 from datetime import UTC, datetime
 
-from network import models
+import network.models as models
 from network.models import Gauging
 from network.numerics.gauging_input import Bank, Channel, Edge, Point, Vertical
 from network.numerics.other_methods import Fill

@@ -52,6 +52,7 @@ class Answer:
     rated_m3s: float | None = None
     deviation_percent: float | None = None
     shift_m: float | None = None
+    wading_limit_m2s: float = 0.9
 
     @property
     def result(self) -> kernel.Gauging | None:
@@ -111,6 +112,7 @@ def answer(
             preview=preview,
             stage=result.stage if result else _plain_stage(sheet, facts, settings),
             calibration=then.calibration,
+            wading_limit_m2s=settings.wading_product_m2s,
         ),
         facts,
     )

@@ -1,6 +1,7 @@
 """Gauging sheets as workbooks: made for a gauging, and loaded again from the field."""
 
 from collections.abc import Sequence
+from dataclasses import replace
 from datetime import date, datetime, time, timedelta
 from typing import IO
 from uuid import UUID
@@ -38,13 +39,14 @@ def write(
     *,
     form_id: UUID,
     version: int,
+    signed_m3s: float | None = None,
     cautions: Sequence[str] = (),
 ) -> None:
     """Write a sheet as a workbook; version 0 for a gauging that is not stored yet."""
     tables = gauging_sheet_writer.CheckTables(
         **_tables(sheet), plates=_plates(sheet.heading.station), cautions=cautions
     )
-    book = _book_of(sheet, form_id=form_id, version=version)
+    book = replace(_book_of(sheet, form_id=form_id, version=version), signed_m3s=signed_m3s)
     gauging_sheet_writer.write(book, tables, stream, words=_words)
 
 

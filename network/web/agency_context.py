@@ -9,5 +9,5 @@ from network.queries import clock
 
 def agency(request: HttpRequest) -> dict[str, Any]:
     """Return the agency and the name of its record clock."""
-    own = clock.agency()
+    own = getattr(request, "agency", None) or clock.agency()
     return {"agency": own, "record_clock": clock.record_clock(own)}

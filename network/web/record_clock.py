@@ -9,11 +9,15 @@ from network.queries import clock
 
 
 class RecordClockMiddleware:
-    """Show and read times on the record clock; a fixed offset, which not every name table has."""
+    """Show and read times on the record clock; a fixed offset, which not every name table has.
+
+    The agency stays with the request, so that no page asks for it again.
+    """
 
     def __init__(self, get_response: Callable[[HttpRequest], HttpResponse]) -> None:
         self.get_response = get_response
 
     def __call__(self, request: HttpRequest) -> HttpResponse:
-        with timezone.override(clock.record_clock(clock.agency())):
+        request.agency = clock.agency()  # type: ignore[attr-defined]
+        with timezone.override(clock.record_clock(request.agency)):  # type: ignore[attr-defined]
             return self.get_response(request)
