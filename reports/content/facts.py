@@ -11,7 +11,7 @@ from network.numerics.marks import Mark
 from network.queries.uncertainty import daily_u95
 from reports import notes
 from reports import yearbook as y
-from reports.content.field_work import gauged
+from reports.content.field_work import Gauged, gauged
 from reports.content.particulars import corrections, local_day, rating_label, rating_rows
 from reports.content.year_data import YearData
 from reports.printed import NO_NUMBER, RECORDED, Number
@@ -26,7 +26,7 @@ def facts(data: YearData) -> notes.Facts:
     missing = (marks & Mark.MISSING) > 0
     withheld = missing & ((marks & WITHHELD) > 0)
     own = gauged(data, data.start, data.end)
-    deviations = own.deviation_percent[~np.isnan(own.deviation_percent)]
+    deviations = _open_water_deviations(data, own)
     fixed = data.printer.fixed
     return notes.Facts(
         days=len(marks),
@@ -47,6 +47,18 @@ def facts(data: YearData) -> notes.Facts:
         corrections=len(corrections(data)),
         printed_notes=tuple(_printed_notes(data)),
     )
+
+
+def _open_water_deviations(data: YearData, own: Gauged) -> list[float]:
+    """Return the known deviations of gaugings on days without ice or backwater."""
+    barred = {
+        day.astype(date) for day in data.days.days[(data.days.marks & Mark.ICE_OR_BACKWATER) > 0]
+    }
+    return [
+        float(deviation)
+        for at, deviation in zip(own.at, own.deviation_percent, strict=True)
+        if not np.isnan(deviation) and local_day(data, at) not in barred
+    ]
 
 
 def completeness(data: YearData) -> tuple[y.CompletenessRow, ...]:
@@ -162,7 +174,7 @@ def _extrapolated_share(data: YearData) -> Number:
 def _rating_uses(data: YearData) -> Iterator[notes.RatingUse]:
     rows = rating_rows(data)
     ends = [row.effective_from for row in rows[1:]] + [data.end]
-    for row, until in zip(rows, ends, strict=True):
+    for row, until in zip(rows, ends, strict=False):
         if row.curve is not None:
             yield notes.RatingUse(
                 label=rating_label(row.curve),

@@ -13,7 +13,7 @@ from network.numerics.rating import rate
 from network.queries import in_force, levels
 from network.queries.station_inputs import rating_periods
 from reports import particulars as p
-from reports.content.particulars import local_day, people, rating_label, rating_rows
+from reports.content.particulars import local_day, people, rating_rows
 from reports.content.year_data import YearData
 
 
@@ -81,7 +81,7 @@ def gaugings(data: YearData) -> tuple[p.Gauging, ...]:
         p.Gauging(
             number=str(number),
             at=at,
-            method=f"{row.get_method_display()}, {row.get_way_display()}",
+            method=_how(row),
             party=people(row.party.all()),
             stage_m=data.printer.stage(stage),
             area_m2=flow(row.area_m2),
@@ -98,10 +98,16 @@ def gaugings(data: YearData) -> tuple[p.Gauging, ...]:
     )
 
 
+def _how(row: Gauging) -> str:
+    """Name the way of working of a current-meter gauging, else the method."""
+    by_meter = row.method == Gauging.Method.VELOCITY_AREA
+    return str(row.get_way_display() if by_meter else row.get_method_display())
+
+
 def _rating_at(data: YearData, at: datetime) -> str:
     begun = [row for row in rating_rows(data) if row.effective_from <= at]
     curve = begun[-1].curve if begun else None
-    return rating_label(curve) if curve else ""
+    return curve.number if curve else ""
 
 
 def calibrations(data: YearData) -> tuple[p.Calibration, ...]:

@@ -4,6 +4,7 @@ from collections.abc import Iterable
 from datetime import date, datetime
 from typing import Any
 
+import numpy as np
 from django.utils.translation import gettext as _
 from django.utils.translation import pgettext
 
@@ -17,7 +18,7 @@ from network.models import (
     StationZero,
     Visit,
 )
-from network.queries import in_force
+from network.queries import blocks, in_force
 from reports import particulars as p
 from reports.content.printer import Printer
 from reports.content.year_data import YearData
@@ -132,9 +133,21 @@ def _recorder(data: YearData, row: Deployment) -> p.Recorder:
         series=row.series.label,
         since=local_day(data, row.installed_at),
         until=local_day(data, row.removed_at) if row.removed_at else None,
-        interval=_("every change") if row.series.is_event_logger else "",
+        interval=_interval(data, row),
         setting=_setting(data, settings[-1]) if settings else "",
     )
+
+
+def _interval(data: YearData, row: Deployment) -> str:
+    """Return the usual step of the readings in the year's last month with any."""
+    if row.series.is_event_logger:
+        return _("every change")
+    months = [m for m in blocks.month_list(row.series) if m.first_at < data.end and m.count > 1]
+    if not months:
+        return ""
+    readings = blocks.read_months(row.series, months=[months[-1].month])
+    step_s = float(np.median(np.diff(readings[months[-1].month].times_s)))
+    return _("{minutes} min").format(minutes=data.printer.fixed(step_s / 60, 0).text)
 
 
 def _setting(data: YearData, row: Any) -> str:
@@ -165,10 +178,10 @@ def rating_label(curve: Curve) -> str:
 def ratings(data: YearData) -> tuple[p.Rating, ...]:
     """Return the ratings of the year."""
     rows = rating_rows(data)
-    ends = [row.effective_from for row in rows[1:]] + [None]
+    ends = [row.effective_from for row in rows[1:]]
     return tuple(
         _rating(data, row, row.curve, until)
-        for row, until in zip(rows, ends, strict=True)
+        for row, until in zip(rows, ends, strict=False)
         if row.curve is not None
     )
 
