@@ -21,6 +21,7 @@ class Edition(models.Model):
     last_day = models.DateField(_("last day"))
     year_label = models.CharField(_("water year"), max_length=9)
     number = models.PositiveSmallIntegerField(_("edition"))
+    language = models.CharField(_("language of print"), max_length=10, blank=True)
     state = models.CharField(
         max_length=10, choices=State.choices, default=State.COMPILED, editable=False
     )
@@ -36,6 +37,14 @@ class Edition(models.Model):
     reason = models.TextField(_("reason of a later edition"), blank=True)
     open_points = models.TextField(_("open points at issue"), blank=True)
     open_points_reason = models.TextField(_("issued all the same because"), blank=True)
+    # The line of this edition in a volume's summary, as the edition itself prints it.
+    mean_text = models.CharField(_("mean"), max_length=20, blank=True)
+    highest_text = models.CharField(_("highest day"), max_length=20, blank=True)
+    highest_on = models.DateField(_("on"), null=True, blank=True)
+    lowest_text = models.CharField(_("lowest day"), max_length=20, blank=True)
+    lowest_on = models.DateField(_("on"), null=True, blank=True)
+    runoff_text = models.CharField(_("runoff, mm"), max_length=20, blank=True)
+    days_given = models.PositiveSmallIntegerField(_("days with a value"), default=0)
     numbers_sha256 = models.CharField(_("SHA-256 of the numbers"), max_length=64)
     pdf = models.FileField(_("PDF"), upload_to="editions/", max_length=200)
     csv = models.FileField(_("data"), upload_to="editions/", max_length=200)
@@ -86,7 +95,7 @@ class Volume(models.Model):
         settings.AUTH_USER_MODEL, models.PROTECT, editable=False, related_name="+"
     )
     editions = models.ManyToManyField(Edition, related_name="volumes", verbose_name=_("editions"))
-    pdf = models.FileField(_("PDF"), upload_to="volumes/", max_length=200)
+    pdf = models.FileField(_("PDF"), upload_to="editions/", max_length=200)
 
     history = history()
 

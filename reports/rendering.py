@@ -30,6 +30,7 @@ STYLESHEETS = (
     "reports/print/fonts.css",
     "reports/print/page.css",
     "reports/print/tables.css",
+    "reports/print/volume.css",
 )
 ALL_MARKS = functools.reduce(operator.or_, Mark)
 # The font map and the parsed sheets belong to the process: one document at a time.
@@ -115,24 +116,31 @@ def to_pdf(page: Page, *, book: Yearbook, csv: bytes) -> bytes:
     """Return a finished page as PDF bytes; identifier and dates come from the edition alone."""
     at = _edition_time(book)
     name = attachment_name(book)
+    with translation.override(book.language):
+        described = _("Daily values")
+    attachment = weasyprint.Attachment(
+        string=csv,
+        name=name,
+        description=described,
+        created=at,
+        modified=at,
+        relationship="Data",
+    )
+    return write_pdf(page, identity=f"{name} {book.edition}", attachments=[attachment])
+
+
+def write_pdf(page: Page, *, identity: str, **options: Any) -> bytes:
+    """Return a finished page as tagged PDF; the same page and identity give the same bytes."""
     with _one_at_a_time:
         sheets, fonts = stylesheets()
-        attachment = weasyprint.Attachment(
-            string=csv,
-            name=name,
-            description=_("Daily values"),
-            created=at,
-            modified=at,
-            relationship="Data",
-        )
         document = weasyprint.HTML(string=page.html, url_fetcher=OwnFetcher(page.figures))
         return document.write_pdf(
             stylesheets=sheets,
             font_config=fonts,
-            attachments=[attachment],
             pdf_variant="pdf/ua-1",
-            pdf_identifier=hashlib.sha256(f"{name} {book.edition}".encode()).digest()[:16],
+            pdf_identifier=hashlib.sha256(identity.encode()).digest()[:16],
             finisher=add_scopes,
+            **options,
         )
 
 

@@ -17,7 +17,6 @@ def own_files(settings, tmp_path):
     """Keep what a test stores away from the installation's own data."""
     settings.DATA_DIR = tmp_path
     settings.MEDIA_ROOT = tmp_path / "media"
-    settings.EDITIONS_ROOT = tmp_path / "editions"
     # The hash that takes its time on purpose is not what these tests are about.
     settings.PASSWORD_HASHERS = ["django.contrib.auth.hashers.MD5PasswordHasher"]
 

@@ -12,8 +12,7 @@ BASE_DIR = Path(__file__).resolve().parents[2]
 
 # --- where an installation keeps its own things -------------------------------------------------
 DATA_DIR = Path(env.text("GAUGEWRIGHT_DATA", str(BASE_DIR / ".data")))
-MEDIA_ROOT = DATA_DIR / "media"  # photographs, certificates, original logger files
-EDITIONS_ROOT = DATA_DIR / "editions"  # issued yearbooks
+MEDIA_ROOT = DATA_DIR / "media"  # photographs, certificates, logger files, yearbooks
 SECRET_KEY_FILE = DATA_DIR / "secret_key"
 
 DEBUG = env.flag("GAUGEWRIGHT_DEBUG", False)

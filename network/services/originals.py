@@ -1,21 +1,17 @@
-"""Logger files as received: kept under their hash, opened again, and swept when no row names them.
+"""Logger files as received: kept under their hash, opened again, swept when no row names them."""
 
-A file is written under a temporary name, flushed to the disk and renamed to its hash; only then
-does a row name it. A crash in between leaves a file that no row names and that `sweep` removes.
-"""
-
-import os
 import re
-import tempfile
 from collections.abc import Iterator
 from contextlib import contextmanager
 from datetime import datetime, timedelta
 from pathlib import Path
-from typing import IO, BinaryIO
+from typing import BinaryIO
 
 from django.conf import settings
 from django.utils.translation import gettext as _
 
+from network.formats import kept_files
+from network.formats.kept_files import Incoming
 from network.models import LoggerImport
 from network.services.acts import Refusal
 
@@ -31,15 +27,14 @@ class OriginalLost(Refusal):
 class Receiving:
     """A stream of bytes that is written to a temporary file while it is read."""
 
-    def __init__(self, stream: BinaryIO, copy: IO[bytes]) -> None:
+    def __init__(self, stream: BinaryIO, file: Incoming) -> None:
         self._stream = stream
-        self._copy = copy
-        self.kept = False
+        self._file = file
 
     def read(self, size: int = -1) -> bytes:
         """Read from the stream and write what came to the copy."""
         part = self._stream.read(size)
-        self._copy.write(part)
+        self._file.copy.write(part)
         return part
 
     def seekable(self) -> bool:
@@ -56,25 +51,14 @@ class Receiving:
 
     def keep(self, sha256: str) -> None:
         """Keep the copy under its hash, once the stream was read to its end."""
-        self._copy.flush()
-        os.fsync(self._copy.fileno())
-        os.replace(self._copy.name, path_of(sha256))
-        self.kept = True
-        _flush_folder()
+        self._file.keep(path_of(sha256).name)
 
 
 @contextmanager
 def receiving(stream: BinaryIO) -> Iterator[Receiving]:
     """Read a stream and keep a copy; nothing stays behind unless `keep` was called."""
-    folder = Path(settings.MEDIA_ROOT, FOLDER)
-    folder.mkdir(parents=True, exist_ok=True)
-    with tempfile.NamedTemporaryFile(dir=folder, prefix="incoming-", delete=False) as copy:
-        received = Receiving(stream, copy)
-        try:
-            yield received
-        finally:
-            if not received.kept:
-                os.unlink(copy.name)
+    with kept_files.incoming(Path(settings.MEDIA_ROOT, FOLDER)) as file:
+        yield Receiving(stream, file)
 
 
 def name_of(sha256: str) -> str:
@@ -105,12 +89,12 @@ def opened(sha256: str, *, called: str) -> Iterator[BinaryIO]:
 
 def unnamed_files(*, at: datetime) -> list[Path]:
     """Return the files in the folder of logger files that no row names, older than a day."""
-    named = set(LoggerImport.objects.values_list("file", flat=True))
-    return [
-        path
-        for path in sorted(Path(settings.MEDIA_ROOT, FOLDER).glob("*"))
-        if f"{FOLDER}/{path.name}" not in named and _modified_before(path, at - SWEPT_AFTER)
-    ]
+    names = LoggerImport.objects.values_list("file", flat=True)
+    return kept_files.unnamed(
+        Path(settings.MEDIA_ROOT, FOLDER),
+        named={name.removeprefix(f"{FOLDER}/") for name in names},
+        before=at - SWEPT_AFTER,
+    )
 
 
 def sweep(*, at: datetime) -> list[Path]:
@@ -119,19 +103,3 @@ def sweep(*, at: datetime) -> list[Path]:
     for path in swept:
         path.unlink(missing_ok=True)
     return swept
-
-
-def _modified_before(path: Path, instant: datetime) -> bool:
-    try:
-        return path.stat().st_mtime < instant.timestamp()
-    except FileNotFoundError:  # gone since it was listed
-        return False
-
-
-def _flush_folder() -> None:
-    """Make the new name itself safe from a power cut, where the system can."""
-    folder = os.open(Path(settings.MEDIA_ROOT, FOLDER), os.O_RDONLY)
-    try:
-        os.fsync(folder)
-    finally:
-        os.close(folder)

@@ -87,6 +87,12 @@ class YearData:
         return np.concatenate([*(self.published(part) for part in self.earlier), self.values])
 
 
+def read_alone(station: Station, year: int) -> YearData:
+    """Read the days of a station's water year without those of the years before it."""
+    days = station_years.year_of_station(station, year)
+    return YearData(station, clock.agency(), station_years.calendar(), year, days, (), ())
+
+
 def read(station: Station, year: int) -> YearData:
     """Read the days of a station's water year and of the years before it.
 

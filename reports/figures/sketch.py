@@ -24,17 +24,19 @@ def draw(sketch: LocationSketch, words: Words) -> str:
             side.set(visible=True, color=style.RULE)
         half_km = _frame(axes, sketch)
         for river in sketch.rivers:
-            x, y = _km(sketch, river[:, 0], river[:, 1])
+            x, y = kilometres(sketch, river[:, 0], river[:, 1])
             axes.plot(x, y, color=style.WATER_MID, linewidth=1.4, zorder=1)
         for place in sketch.neighbours:
-            x, y = _km(sketch, np.array([place.latitude]), np.array([place.longitude]))
+            x, y = kilometres(sketch, np.array([place.latitude]), np.array([place.longitude]))
             _mark(axes, x=float(x[0]), y=float(y[0]), name=place.name, half_km=half_km, main=False)
         _mark(axes, x=0, y=0, name=sketch.station.name, half_km=half_km, main=True)
-        _scale_and_north(axes, half_km, words)
+        scale_and_north(axes, half_km, words.north)
         return style.svg(figure)
 
 
-def _km(sketch: LocationSketch, latitude: Values, longitude: Values) -> tuple[Values, Values]:
+def kilometres(
+    sketch: LocationSketch, latitude: Values, longitude: Values
+) -> tuple[Values, Values]:
     """Return east and north of the station in km (plane, good to 1 % within 100 km)."""
     shrink = np.cos(np.radians(sketch.station.latitude))
     east = (longitude - sketch.station.longitude) * KM_PER_DEGREE * shrink
@@ -46,7 +48,7 @@ def _frame(axes: Axes, sketch: LocationSketch) -> float:
     """Fit station and neighbours into the frame and return half its width in km."""
     latitudes = np.array([sketch.station.latitude] + [p.latitude for p in sketch.neighbours])
     longitudes = np.array([sketch.station.longitude] + [p.longitude for p in sketch.neighbours])
-    east, north = _km(sketch, latitudes, longitudes)
+    east, north = kilometres(sketch, latitudes, longitudes)
     middle = (east.max() + east.min()) / 2, (north.max() + north.min()) / 2
     shape = WIDTH_MM / HEIGHT_MM
     reach = max(np.ptp(east) / 2, np.ptp(north) / 2 * shape)
@@ -84,7 +86,7 @@ def _mark(axes: Axes, *, x: float, y: float, name: str, half_km: float, main: bo
     )
 
 
-def _scale_and_north(axes: Axes, half_km: float, words: Words) -> None:
+def scale_and_north(axes: Axes, half_km: float, north: str) -> None:
     """Draw a bar of a round length at lower left and an arrow to the north at upper right."""
     rough = half_km * 0.5
     step = 10 ** np.floor(np.log10(rough))
@@ -94,7 +96,7 @@ def _scale_and_north(axes: Axes, half_km: float, words: Words) -> None:
     axes.plot([0.05, 0.05 + share], [0.06, 0.06], color=style.INK, linewidth=1.6, **place)
     axes.text(0.05, 0.085, f"{length:g} km", va="bottom", fontsize=style.SMALL, **place)
     axes.annotate(
-        words.north,
+        north,
         (0.94, 0.955),
         xytext=(0.94, 0.83),
         xycoords="axes fraction",
