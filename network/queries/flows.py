@@ -2,7 +2,7 @@
 
 from collections.abc import Callable, Mapping
 from dataclasses import dataclass, replace
-from datetime import date, timedelta
+from datetime import date
 
 import numpy as np
 import numpy.typing as npt
@@ -45,18 +45,25 @@ class StationDays:
         stop = start + (last_day - first_day).days + 1
         cut = slice(start, stop)
         return StationDays(
-            *(getattr(self, name)[cut] for name in DAY_COLUMNS),
+            days=self.days[cut],
+            flow_m3s=self.flow_m3s[cut],
+            stage_m=self.stage_m[cut],
+            marks=self.marks[cut],
+            covered_s=self.covered_s[cut],
+            estimated_percent=self.estimated_percent[cut],
             stage=extremes_part(self.stage, cut),
             flow=extremes_part(self.flow, cut),
         )
 
 
-DAY_COLUMNS = ("days", "flow_m3s", "stage_m", "marks", "covered_s", "estimated_percent")
-
-
 def extremes_part(extremes: DailyExtremes, cut: slice) -> DailyExtremes:
     """Return some days of daily extremes."""
     return DailyExtremes(*(column[cut] for column in vars(extremes).values()))
+
+
+def calendar_days(first_day: date, n_days: int) -> npt.NDArray[np.datetime64]:
+    """Return consecutive days: datetime64[D][n_days]."""
+    return np.datetime64(first_day, "D") + np.arange(n_days)
 
 
 def days_of(station: Station, first_day: date, last_day: date) -> StationDays:
@@ -103,7 +110,7 @@ def compute(inputs: StationInputs, raw: Mapping[int, Readings]) -> StationDays:
     flow = _means(inputs, record.times_s, record.flow_m3s, record.marks)
     published = flow if inputs.station.is_rated else stage
     days = StationDays(
-        days=np.arange(inputs.first_day, inputs.last_day + timedelta(days=1), dtype="M8[D]"),
+        days=calendar_days(inputs.first_day, inputs.n_days),
         flow_m3s=flow.mean,
         stage_m=stage.mean,
         marks=published.marks | _noted(inputs),

@@ -105,7 +105,7 @@ class Estimator:
         times, ratios = self.gauged
         inside = (times > first) & (times < last)
         return infill.winter_ratio(
-            np.arange(len(self.days)) + 0.5,  # the middle of each day
+            np.arange(len(self.days), dtype=np.float64) + 0.5,  # the middle of each day
             self.open_water_m3s(),
             gauged_times=np.array([first, *times[inside], last], np.float64),
             ratios=np.array([1.0, *ratios[inside], 1.0]),

@@ -2,7 +2,7 @@
 
 import zlib
 from collections.abc import Iterator
-from datetime import date, timedelta
+from datetime import date
 
 import numpy as np
 
@@ -96,9 +96,8 @@ def unpack(data: bytes, *, first_day: date) -> StationDays:
     if data[:1] != VERSION:
         raise ValueError("These are not the days of a year, or of a later version.")
     table = np.frombuffer(zlib.decompress(data[1:]), ROW)
-    last_day = first_day + timedelta(days=len(table))
     return StationDays(
-        days=np.arange(first_day, last_day, dtype="M8[D]"),
+        days=flows.calendar_days(first_day, len(table)),
         **{
             name: table[name].copy()
             for name in ("flow_m3s", "stage_m", "marks", "covered_s", "estimated_percent")

@@ -99,7 +99,7 @@ def claim_version(row: models.Model, *, version: int) -> None:
                 "newer version in another window, then save again."
             )
         )
-    row.version = version + 1  # type: ignore[attr-defined]
+    row.version = version + 1
 
 
 def required_reason(reason: str) -> str:
@@ -112,8 +112,8 @@ def required_reason(reason: str) -> str:
 
 def withdraw(row: models.Model, *, by: Person, at: datetime, reason: str) -> None:
     """Mark a withdrawable row as withdrawn, within the open act; refuse one already withdrawn."""
-    if row.withdrawn_at is not None:  # type: ignore[attr-defined]
+    if row.withdrawn_at is not None:
         raise Refusal(_("This is already withdrawn."))
-    row.withdrawn_at, row.withdrawn_by = at, by  # type: ignore[attr-defined]
-    row.withdrawn_reason = required_reason(reason)  # type: ignore[attr-defined]
+    row.withdrawn_at, row.withdrawn_by = at, by
+    row.withdrawn_reason = required_reason(reason)
     row.save()
