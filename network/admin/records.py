@@ -73,6 +73,7 @@ class SeriesAdmin(ServedAdmin):
             permission="network.add_sensorsetting",
             form=SettingForm,
             run=lambda row, **filled: series_acts.set_sensor(series=row, **filled),
+            station_of=lambda row: row.station,
         ),
     )
 
@@ -114,6 +115,7 @@ class SensorSettingAdmin(ReadOnlyAdmin):
             permission="network.change_sensorsetting",
             applies=stands,
             run=lambda row, **filled: series_acts.withdraw_setting(setting=row, **filled),
+            station_of=lambda row: row.series.station,
         ),
     )
 
@@ -148,6 +150,8 @@ class LoggerImportAdmin(ImportPages, ReadOnlyAdmin):
                 "a while."
             ),
             run=lambda row, **filled: imports.withdraw_import(logger_import=row, **filled),
+            station_of=lambda row: row.series.station,
+            touches_readings=True,
         ),
     )
 

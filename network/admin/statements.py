@@ -14,13 +14,22 @@ from django.utils.translation import gettext_lazy as _
 
 from network.admin.acting import Filled, ServedAdmin
 from network.admin.records import stands
+from network.admin.trying import Tried
 from network.admin.verbs import NoReasonForm, Verb
-from network.models import Correction, Dismissal, Infill, Note, RecordReview, TypedFlow
+from network.models import (
+    Correction,
+    Dismissal,
+    Infill,
+    Note,
+    RecordReview,
+    Station,
+    TypedFlow,
+)
 from network.services import corrections, infills, notes, reviews, typed_flows
 
 
 class Stated(ServedAdmin):
-    """Rows that are added, looked at and withdrawn."""
+    """Rows that are added, looked at and withdrawn; with `Tried`, after before and after."""
 
     # The service that adds one, from the fields of the form.
     add: Callable[..., models.Model]
@@ -34,7 +43,13 @@ class Stated(ServedAdmin):
         return type(self).add(**filled.values, by=request.user, at=timezone.now())
 
 
-def withdrawal(model: type[models.Model], act: Callable[..., None], *, row_as: str) -> Verb:
+def withdrawal(
+    model: type[models.Model],
+    act: Callable[..., None],
+    *,
+    row_as: str,
+    station_of: Callable[[Any], Station] | None = None,
+) -> Verb:
     """Return the verb that withdraws a row of a model, given to its service as `row_as`."""
     return Verb(
         name="withdraw",
@@ -42,7 +57,20 @@ def withdrawal(model: type[models.Model], act: Callable[..., None], *, row_as: s
         permission=f"network.change_{model._meta.model_name}",
         applies=stands,
         run=lambda row, **filled: act(**{row_as: row}, **filled),
+        station_of=station_of,
     )
+
+
+def own_station(row: Any) -> Station:
+    """Return the station that a row names."""
+    station: Station = row.station
+    return station
+
+
+def station_of_series(row: Any) -> Station:
+    """Return the station of the series that a row names."""
+    station: Station = row.series.station
+    return station
 
 
 @admin.register(Correction)
@@ -62,35 +90,41 @@ class CorrectionAdmin(Stated):
             form=NoReasonForm,
             applies=lambda row: stands(row) and row.state == Correction.State.PROPOSED,
             run=lambda row, **who: corrections.accept_correction(correction=row, **who),
+            station_of=station_of_series,
         ),
-        withdrawal(Correction, corrections.withdraw_correction, row_as="correction"),
+        withdrawal(
+            Correction,
+            corrections.withdraw_correction,
+            row_as="correction",
+            station_of=station_of_series,
+        ),
     )
 
 
 @admin.register(Note)
-class NoteAdmin(Stated):
+class NoteAdmin(Tried, Stated):
     """Notes on the record."""
 
     add = notes.add_note
     list_display = ("station", "start_at", "end_at", "cause", "flows", "withdrawn_at")
     list_filter = ("station", "cause", "flows")
     list_select_related = ("station",)
-    verbs = (withdrawal(Note, notes.withdraw_note, row_as="note"),)
+    verbs = (withdrawal(Note, notes.withdraw_note, row_as="note", station_of=own_station),)
 
 
 @admin.register(Infill)
-class InfillAdmin(Stated):
+class InfillAdmin(Tried, Stated):
     """Infills."""
 
     add = infills.add_infill
     list_display = ("station", "first_day", "last_day", "method", "withdrawn_at")
     list_filter = ("station", "method")
     list_select_related = ("station",)
-    verbs = (withdrawal(Infill, infills.withdraw_infill, row_as="infill"),)
+    verbs = (withdrawal(Infill, infills.withdraw_infill, row_as="infill", station_of=own_station),)
 
 
 @admin.register(TypedFlow)
-class TypedFlowAdmin(Stated):
+class TypedFlowAdmin(Tried, Stated):
     """Typed daily flows."""
 
     add = typed_flows.type_flow
@@ -98,7 +132,11 @@ class TypedFlowAdmin(Stated):
     list_filter = ("station",)
     list_select_related = ("station", "recorded_by")
     date_hierarchy = "day"
-    verbs = (withdrawal(TypedFlow, typed_flows.withdraw_typed_flow, row_as="typed_flow"),)
+    verbs = (
+        withdrawal(
+            TypedFlow, typed_flows.withdraw_typed_flow, row_as="typed_flow", station_of=own_station
+        ),
+    )
 
 
 @admin.register(Dismissal)

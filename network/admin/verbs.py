@@ -17,6 +17,8 @@ from django.utils.text import capfirst
 from django.utils.translation import gettext as _t
 from django.utils.translation import gettext_lazy as _
 
+from network.admin import trying
+from network.models import Station
 from network.services.acts import Refusal
 
 
@@ -41,6 +43,8 @@ class Verb:
 
     `run(row, by=, at=, **cleaned)` is the service; `preview(request, row, form)` returns the HTML
     of before and after, called when the page opens and again when "show" is pressed.
+    With `station_of` the act is tried first: what it would change at that station is shown, and
+    done once confirmed (network/admin/trying.py); say whether it touches readings.
     """
 
     name: str
@@ -51,6 +55,8 @@ class Verb:
     applies: Callable[[Any], bool] = always
     preview: Callable[[HttpRequest, Any, forms.Form], str] | None = None
     caution: Any = ""
+    station_of: Callable[[Any], Station] | None = None
+    touches_readings: bool = False
 
 
 class VerbPages:
@@ -90,10 +96,19 @@ class VerbPages:
         form = verb.form(request.POST if request.method == "POST" else None)
         meant = request.method == "POST" and "_show" not in request.POST
         if meant and form.is_valid() and _done(verb, row=row, form=form, request=request):
+            if hasattr(request, "differences"):
+                return self._before_and_after(request, row=row, verb=verb)
             said = {"verb": capfirst(str(verb.label)), "row": row}
             messages.success(request, _t("%(verb)s: %(row)s. Done.") % said)
             return self._to_row(row)
         return self._verb_page(request, row=row, verb=verb, form=form)
+
+    def _before_and_after(
+        self, request: HttpRequest, *, row: models.Model, verb: Verb
+    ) -> HttpResponse:
+        context = self.admin_site.each_context(request)  # type: ignore[attr-defined]
+        title = capfirst(str(verb.label))
+        return trying.page(request, **context, opts=row._meta, title=title, subtitle=str(row))
 
     def _view_of(self, verb: Verb) -> Callable[..., HttpResponse]:
         def view(request: HttpRequest, object_id: str) -> HttpResponse:
@@ -134,10 +149,19 @@ class VerbPages:
 
 
 def _done(verb: Verb, *, row: models.Model, form: forms.Form, request: HttpRequest) -> bool:
-    """Run the verb in one transaction; on a refusal roll back and put the sentence on the form."""
+    """Run or try the verb; on a refusal roll back and put the sentence on the form."""
+
+    def act() -> object:
+        fresh = type(row)._base_manager.get(pk=row.pk)
+        return verb.run(fresh, by=request.user, at=timezone.now(), **form.cleaned_data)
+
     try:
         with transaction.atomic():
-            verb.run(row, by=request.user, at=timezone.now(), **form.cleaned_data)
+            if verb.station_of is None:
+                act()
+            else:
+                station = verb.station_of(row)
+                trying.tried(request, station, act, touches_readings=verb.touches_readings)
     except Refusal as refusal:
         known = refusal.field in form.fields
         form.add_error(refusal.field if known else None, refusal.sentence)

@@ -1,6 +1,6 @@
 """What a field sheet gives, held against the rating in force: the one answer of screen and row."""
 
-from collections.abc import Iterable
+from collections.abc import Iterable, Sequence
 from dataclasses import dataclass, replace
 
 import numpy as np
@@ -158,9 +158,16 @@ def stages_of(gaugings: Iterable[Gauging]) -> dict[int, float | None]:
     The plate zeros in force at the mid-time count: a levelling adopted later moves old stages.
     """
     rows = list(gaugings)
-    prefetch_related_objects(rows, "stages__plate__zeros", "channels__verticals")
+    prefetch_related_objects(rows, "stages__plate__zeros")
+    read = {row.pk: _stages_read(row) for row in rows}
     limit_m = GaugingSettings().stage_change_m
-    return {row.pk: _stored_stage_m(row, limit_m) for row in rows}
+    # flows weigh the stage only where it moved; elsewhere the verticals need not be read
+    moved = [row for row in rows if _spread_m(read[row.pk]) > limit_m]
+    prefetch_related_objects(moved, "channels__verticals")
+    flows = {row.pk: _vertical_flows(row) for row in moved}
+    return {
+        row.pk: _stored_stage_m(row, read[row.pk], flows.get(row.pk, ()), limit_m) for row in rows
+    }
 
 
 def _by_other_method(sheet: FieldSheet, facts: StationFacts, settings: GaugingSettings) -> Answer:
@@ -224,27 +231,45 @@ def _stated_cases(result: kernel.Gauging) -> Iterable[Finding]:
         yield Finding("agency_value", "verticals", said, None, NO_STANDARD, advice=True)
 
 
-def _stored_stage_m(gauging: Gauging, limit_m: float) -> float | None:
+def _stages_read(gauging: Gauging) -> list[tuple[int, float]]:
+    """Return the instants and stages of a gauging's readings, those whose zero is known."""
     middle = gauging.started_at + (gauging.ended_at - gauging.started_at) / 2
-    known = [
+    return [
         (seconds(row.read_at), row.reading_m + zero)
         for row in gauging.stages.all()
         if (zero := 0.0 if row.plate is None else _zero_m(row.plate, middle)) is not None
     ]
-    if not known:
-        return None
-    verticals = [
-        vertical
+
+
+def _spread_m(read: list[tuple[int, float]]) -> float:
+    stages = [stage_m for _at, stage_m in read]
+    return max(stages) - min(stages) if stages else 0.0
+
+
+def _vertical_flows(gauging: Gauging) -> list[tuple[float, float]]:
+    """Return the time (not a number where not noted) and flow of each vertical."""
+    return [
+        (np.nan if v.measured_at is None else seconds(v.measured_at), v.panel_flow_m3s)
         for channel in gauging.channels.all()
-        for vertical in channel.verticals.all()
-        if vertical.panel_flow_m3s is not None
+        for v in channel.verticals.all()
+        if v.panel_flow_m3s is not None
     ]
-    times = [np.nan if v.measured_at is None else seconds(v.measured_at) for v in verticals]
+
+
+def _stored_stage_m(
+    gauging: Gauging,
+    read: Sequence[tuple[int, float]],
+    flows: Sequence[tuple[float, float]],
+    limit_m: float,
+) -> float | None:
+    if not read:
+        return None
+    readings, verticals = (np.array(rows, np.float64).reshape(-1, 2).T for rows in (read, flows))
     return mean_stage(
-        np.array([at for at, _stage in known], np.float64),
-        np.array([stage_m for _at, stage_m in known], np.float64),
-        vertical_s=np.array(times, np.float64),
-        flow_m3s=np.array([v.panel_flow_m3s for v in verticals], np.float64),
+        readings[0],
+        readings[1],
+        vertical_s=verticals[0],
+        flow_m3s=verticals[1],
         period_s=(seconds(gauging.started_at), seconds(gauging.ended_at)),
         limit_m=limit_m,
     ).stage_m

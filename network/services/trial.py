@@ -1,64 +1,40 @@
 """Before and after: run the real act, look at what it changes, and take it back."""
 
 import hashlib
-from collections.abc import Callable, Mapping, Sequence
+from collections.abc import Callable, Mapping
 from contextlib import suppress
 from dataclasses import dataclass
-from datetime import date, timedelta
+from datetime import date
 from typing import Any
 
-import numpy as np
 from django.conf import settings
 from django.db import connection, transaction
 from django.utils.module_loading import import_string
 from django.utils.translation import gettext as _
 
 from network.models import Station
-from network.numerics.arrays import Floats
-from network.queries import flows, station_years
+from network.numerics.readings import Readings
+from network.queries import flows, held_gaugings, station_years
+from network.queries.differences import Differences, compared
 from network.queries.flows import StationDays
+from network.queries.held_gaugings import Held
 from network.queries.station_inputs import StationInputs, load
-from network.services.acts import Refusal
+from network.services.acts import Refusal, lock_station
+
+__all__ = ["Differences", "before_and_after", "confirm", "fingerprint"]
+
+Span = tuple[date, date]
+NO_READINGS = date(2000, 1, 1), date(2000, 1, 1)
 
 
-@dataclass(frozen=True)
-class YearChange:
-    """The volume of a water year before and after, hm³; None where days are missing."""
+@dataclass(eq=False)
+class _Side:
+    """What is loaded of one side; its days where they can only be computed while it stands."""
 
-    label: str
-    before_hm3: float | None
-    after_hm3: float | None
-
-
-@dataclass(frozen=True, eq=False)
-class Differences:
-    """What an act would change in the published figures of one station.
-
-    days are those whose value or marks differ; changes their after − before in m³/s (m at a
-    stage-only station), NaN where one side is missing.
-    """
-
-    station: Station
-    fingerprint: str
-    days: Sequence[date]
-    changes: Floats
-    before: Floats
-    after: Floats
-    years: Sequence[YearChange]
-    editions: Sequence[Any]
-    more: Mapping[str, Any]
-
-    @property
-    def largest(self) -> float | None:
-        """The largest change of a day, with its sign."""
-        known = self.changes[~np.isnan(self.changes)]
-        return float(known[np.argmax(np.abs(known))]) if len(known) else None
-
-    @property
-    def mean(self) -> float | None:
-        """The mean change of the days that have both sides."""
-        known = self.changes[~np.isnan(self.changes)]
-        return float(known.mean()) if len(known) else None
+    inputs: StationInputs
+    gaugings: list[Held]
+    looked: Mapping[str, Any]
+    days: StationDays | None = None
 
 
 def before_and_after(
@@ -66,36 +42,45 @@ def before_and_after(
     act: Callable[[], Any],
     *,
     look: Callable[[], Mapping[str, Any]] = dict,
+    touches_readings: bool = False,
 ) -> Differences:
     """Run an act in a transaction that is rolled back and compare both sides.
 
-    look returns other answers (of gaugings, of visits) to compare; it is asked on both sides and
+    look returns other answers (of plates, of visits) to compare; it is asked on both sides and
     comes back as {"before": …, "after": …}. A refusal of the act passes through.
-    Inputs are chains, not readings: the readings are decoded once, after the transaction.
+    Inputs are chains, not readings: the readings are decoded once, after the transaction, unless
+    the act touches readings too or days rest on a regression, which reads the record by itself.
     """
     span = _span(station)
-    before = load(station, *span)
-    looked_before = look()
     with transaction.atomic():
+        lock_station(station)
+        before = _side(station, span, look)
+        if touches_readings:
+            before.days = _days(before, span)
         act()
-        after = load(station, *span)
-        looked_after = look()
+        after = _side(station, span, look)
+        if touches_readings or any(each.neighbour for each in after.inputs.infills):
+            after.days = _days(after, span)
         with suppress(NotImplementedError):
             connection.check_constraints()  # deferred foreign keys are not seen in a rollback
         transaction.set_rollback(True)
-    sides = _both_sides(before, after, span)
-    return _compare(
+    raw = None if before.days else _shared_readings(before, after)
+    days = [side.days or _days(side, span, raw) for side in (before, after)]
+    found = compared(
         station,
-        *sides,
-        fingerprint=fingerprint(before),
-        more={"before": looked_before, "after": looked_after},
+        days[0],
+        days[1],
+        fingerprint=fingerprint(before.inputs),
+        gaugings=held_gaugings.changes(before.gaugings, after.gaugings),
+        more={"before": before.looked, "after": after.looked},
     )
+    return found.with_editions(import_string(settings.EDITIONS_TOUCHED_BY)(station, found.days))
 
 
 def confirm(station: Station, act: Callable[[], Any], *, seen: str) -> Any:
     """Do the act if the first side is still the one that was shown; refuse if it moved."""
     with transaction.atomic():
-        Station.objects.select_for_update(no_key=True).get(pk=station.pk)
+        lock_station(station)
         if fingerprint(load(station, *_span(station))) != seen:
             raise Refusal(
                 _("The record changed since this was shown. Look at the differences again.")
@@ -109,66 +94,33 @@ def fingerprint(inputs: StationInputs) -> str:
     return hashlib.sha256(text.encode()).hexdigest()[:32]
 
 
-def _span(station: Station) -> tuple[date, date]:
+def _span(station: Station) -> Span:
     """Return whole water years around all readings, or one day where there are none."""
     years = station_years.years_on_record(station)
-    calendar = station_years.calendar()
     if not years:
-        return date(2000, 1, 1), date(2000, 1, 1)
+        return NO_READINGS
+    calendar = station_years.calendar()
     return calendar.first_day(years[0]), calendar.last_day(years[-1])
 
 
-def _both_sides(
-    before: StationInputs, after: StationInputs, span: tuple[date, date]
-) -> tuple[StationDays, StationDays]:
-    """Compute both sides by the same code from readings decoded once."""
-    raw = dict(flows.readings_of(before))
-    raw |= {pk: r for pk, r in flows.readings_of(after).items() if pk not in raw}
-    return flows.compute(before, raw).part(*span), flows.compute(after, raw).part(*span)
+def _side(station: Station, span: Span, look: Callable[[], Mapping[str, Any]]) -> _Side:
+    return _Side(load(station, *span), held_gaugings.of_station(station), look())
 
 
-def _compare(
-    station: Station,
-    before: StationDays,
-    after: StationDays,
-    *,
-    fingerprint: str,
-    more: Mapping[str, Any],
-) -> Differences:
-    one, other = _published(station, before), _published(station, after)
-    same = (one == other) | (np.isnan(one) & np.isnan(other))
-    changed = np.flatnonzero(~same | (before.marks != after.marks))
-    days = [day.astype(date) for day in before.days[changed]]
-    return Differences(
-        station=station,
-        fingerprint=fingerprint,
-        days=days,
-        changes=other[changed] - one[changed],
-        before=one[changed],
-        after=other[changed],
-        years=_years(before, after) if station.is_rated else (),
-        editions=import_string(settings.EDITIONS_TOUCHED_BY)(station, days),
-        more=more,
-    )
+def _days(side: _Side, span: Span, raw: Mapping[int, Readings] | None = None) -> StationDays:
+    readings = flows.readings_of(side.inputs) if raw is None else raw
+    return flows.compute(side.inputs, readings).part(*span)
 
 
-def _published(station: Station, days: StationDays) -> Floats:
-    return days.flow_m3s if station.is_rated else days.stage_m
+def _shared_readings(before: _Side, after: _Side) -> Mapping[int, Readings] | None:
+    """Decode once what both sides need; None where they need different readings."""
+    one, other = before.inputs, after.inputs
+    same_period = (one.first_day, one.last_day) == (other.first_day, other.last_day)
+    if not same_period or _series(other) - _series(one):
+        return None
+    return flows.readings_of(one)
 
 
-def _years(before: StationDays, after: StationDays) -> list[YearChange]:
-    """Return the years whose volume differs."""
-    calendar = station_years.calendar()
-    numbers = calendar.years_of(before.days)
-    changes = []
-    for year in np.unique(numbers):
-        volumes = [_volume_hm3(side.flow_m3s[numbers == year]) for side in (before, after)]
-        if volumes[0] != volumes[1]:
-            changes.append(YearChange(calendar.label(int(year)), *volumes))
-    return changes
-
-
-def _volume_hm3(flow_m3s: Floats) -> float | None:
-    # V = Σ Q̄ · 86 400 s
-    volume = float(np.sum(flow_m3s)) * timedelta(days=1).total_seconds() / 1e6
-    return None if np.isnan(volume) else volume
+def _series(inputs: StationInputs) -> set[int]:
+    wanted = [inputs.series, *(span.series for span in inputs.infills)]
+    return {series.pk for series in wanted if series is not None}
