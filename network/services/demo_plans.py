@@ -2,32 +2,33 @@
 
 from datetime import date, datetime, timedelta
 
-from django.db.models import Model
 from django.utils.translation import gettext as _
 
 from network.formats.demo_field_rows import Postponement as PostponementRow
 from network.formats.demo_field_rows import Round as RoundRow
 from network.formats.demo_field_rows import SafetyItem as SafetyRow
 from network.formats.demo_rows import Station as StationRow
-from network.models import Inspection, Person, Postponement, Round, SafetyItem, Stop, StopTask
+from network.models import Round, SafetyItem, Stop, StopTask
 from network.queries import clock, station_years
-from network.services import registry, reviews
+from network.queries.work_due.items import Kind
+from network.services import plans, registry, reviews
 from network.services.demo_cast import OFFICE_OPENS, Cast
 
 KINDS = {"stilling well": "well"}
-RULES = {"gauging wanted": "gauging", "level check": "levels"}
+KINDS_OF_WORK = {"gauging wanted": Kind.GAUGING, "level check": Kind.LEVELS}
 PLANNED_BEFORE = timedelta(days=7)
+PUT_OFF_BEFORE = timedelta(days=60)
 
 
 def load_plans(cast: Cast) -> None:
     """Enter what the plans say of the stations that are loaded."""
-    plans = cast.scenario.plans
-    for item in plans.safety_items:
+    told_plans = cast.scenario.plans
+    for item in told_plans.safety_items:
         if item.station in cast.stations:
             _load_safety_item(cast, item)
-    for told in plans.rounds:
+    for told in told_plans.rounds:
         _load_round(cast, told)
-    for put_off in plans.postponements:
+    for put_off in told_plans.postponements:
         if put_off.station in cast.stations:
             _load_postponement(cast, put_off)
 
@@ -49,10 +50,6 @@ def _morning(day: date) -> datetime:
     return clock.day_start(day, of=clock.agency()) + OFFICE_OPENS
 
 
-def _keep(row: Model, *, verb: str, by: Person, at: datetime) -> None:
-    registry.keep(row, save=row.save, verb=verb, by=by, at=at)
-
-
 def _load_safety_item(cast: Cast, told: SafetyRow) -> None:
     item = SafetyItem(
         station=cast.stations[told.station],
@@ -60,16 +57,18 @@ def _load_safety_item(cast: Cast, told: SafetyRow) -> None:
         label=told.label,
         interval_months=told.interval_months,
     )
-    _keep(item, verb=_("added a safety item"), by=cast.manager, at=cast.opening)
+    registry.keep(
+        item, save=item.save, verb=_("added a safety item"), by=cast.manager, at=cast.opening
+    )
     for seen in told.inspections:
-        inspection = Inspection(
+        plans.record_inspection(
             item=item,
             inspected_on=seen.on,
             is_safe=seen.outcome == "passed",
             remarks=seen.remarks,
+            by=cast.people[seen.by],
+            at=_morning(seen.on),
         )
-        at = _morning(seen.on)
-        _keep(inspection, verb=_("inspected a safety item"), by=cast.people[seen.by], at=at)
 
 
 def _load_round(cast: Cast, told: RoundRow) -> None:
@@ -100,12 +99,12 @@ def _load_round(cast: Cast, told: RoundRow) -> None:
 
 def _load_postponement(cast: Cast, told: PostponementRow) -> None:
     station = cast.stations[told.station]
-    row = Postponement(
-        rule=RULES[told.what],
+    plans.postpone(
+        kind=KINDS_OF_WORK[told.what],
         subject=f"station-{station.pk}",
         station=station,
         until=told.until,
         reason=told.reason,
+        by=cast.people[told.by],
+        at=min(_morning(told.until) - PUT_OFF_BEFORE, cast.present),
     )
-    at = min(_morning(told.until) - timedelta(days=60), cast.present)
-    _keep(row, verb=_("put work off"), by=cast.people[told.by], at=at)
