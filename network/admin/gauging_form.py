@@ -258,16 +258,16 @@ def _row(model: type[models.Model], text: Any) -> Any:
 
 
 def _floats_of(text: str) -> tuple[field_sheets.TimedFloat, ...]:
-    rows = _numbers_of(text, 3, _("part, area and seconds"))
+    rows = numbers_of(text, 3, _("part, area and seconds"))
     return tuple(field_sheets.TimedFloat(int(part or 0), area, s) for part, area, s in rows)
 
 
 def _samples_of(text: str) -> tuple[field_sheets.Sample, ...]:
-    rows = _numbers_of(text, 3, _("place, seconds or –, and concentration"))
+    rows = numbers_of(text, 3, _("place, seconds or –, and concentration"))
     return tuple(field_sheets.Sample(int(place or 1), c, seconds) for place, seconds, c in rows)
 
 
-def _numbers_of(text: str, count: int, wanted: str) -> list[list[float | None]]:
+def numbers_of(text: str, count: int, wanted: str) -> list[list[float | None]]:
     """Read lines of numbers apart by tabs, semicolons or blanks; a dash is no number."""
     rows = []
     for number, line in enumerate(text.splitlines(), start=1):

@@ -1,5 +1,6 @@
 """What the pages of a gauging show of an answer: figures, findings by place, a result a line."""
 
+from collections.abc import Iterable
 from dataclasses import dataclass
 from typing import Any
 
@@ -49,7 +50,7 @@ def shown_answer(
             ShownFinding(said(fault.sentence), cell=_cell(fault, table, lines))
             for fault in found.faults
         ],
-        "findings": [
+        "findings": grouped(
             ShownFinding(
                 said(finding.sentence),
                 said_source(finding.source),
@@ -58,8 +59,9 @@ def shown_answer(
                 finding.advice,
             )
             for finding in found.findings
-        ],
+        ),
         "line_results": line_results(found, table, lines),
+        "wading_limit_m2s": found.wading_limit_m2s,
     }
 
 
@@ -68,12 +70,20 @@ def stored_answer(row: Gauging, *, agency: Agency) -> dict[str, Any]:
     found = answers.of_stored(row, agency=agency)
     context = shown_answer(found)
     stored = row.findings.all()
-    context["findings"] = [
+    context["findings"] = grouped(
         ShownFinding(finding.sentence, finding.source, kind=finding.kind) for finding in stored
-    ]
+    )
     context["signed"] = row
     context["channels"] = row.channels.prefetch_related("verticals__points")
     return context
+
+
+def grouped(found: Iterable[ShownFinding]) -> list[list[ShownFinding]]:
+    """Put findings of one kind together, in the order of the first of each."""
+    groups: dict[str, list[ShownFinding]] = {}
+    for finding in found:
+        groups.setdefault(finding.kind, []).append(finding)
+    return list(groups.values())
 
 
 def said_source(source: str) -> str:

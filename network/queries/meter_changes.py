@@ -30,6 +30,15 @@ class Touched:
 
 
 @dataclass(frozen=True)
+class SpeedChange:
+    """One speed by the older rating, by the newer, and the change in %; None where none holds."""
+
+    older_ms: float
+    newer_ms: float | None
+    percent: float | None
+
+
+@dataclass(frozen=True)
 class LookBack:
     """A calibration beside the one before; gaugings are listed beyond the agency's limit only."""
 
@@ -38,6 +47,19 @@ class LookBack:
     change: RatingChange
     limit_percent: float
     gaugings: Sequence[Touched]
+
+    @property
+    def speeds(self) -> list[SpeedChange]:
+        """The five speeds one by one."""
+        columns = (self.change.older_ms, self.change.newer_ms, self.change.change_percent)
+        return [
+            SpeedChange(
+                float(older),
+                None if np.isnan(newer) else float(newer),
+                None if np.isnan(percent) else float(percent),
+            )
+            for older, newer, percent in zip(*columns, strict=True)
+        ]
 
     @property
     def largest_percent(self) -> float:

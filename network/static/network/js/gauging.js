@@ -151,6 +151,7 @@
   // --- what the page listens to -----------------------------------------------------------------------
   form.addEventListener("input", soon);
   form.addEventListener("change", soon);
+  form.addEventListener("submit", () => { clearTimeout(timer); running?.abort(); });
   if (!group) { soon(); return; }
 
   const noted = document.getElementById("id_noted");
