@@ -5,7 +5,7 @@ from django.db.models import Q
 from django.utils.translation import gettext_lazy as _
 
 from network.models.acts import history
-from network.models.chains import ChainRow
+from network.models.chains import ChainRow, one_standing
 
 
 class Calibration(ChainRow):
@@ -62,12 +62,15 @@ class Calibration(ChainRow):
                     "A calibration belongs to a meter, a group of meters or an instrument."
                 ),
             ),
-            models.UniqueConstraint(
-                name="network_calibration_start_once",
-                fields=["pair", "group", "instrument", "effective_from"],
-                condition=Q(withdrawn_at__isnull=True),
-                nulls_distinct=False,
-                violation_error_message=_("There is already a calibration from this instant."),
+            *(
+                one_standing(
+                    owner,
+                    "effective_from",
+                    model="calibration",
+                    what=f"start_once_{owner}",
+                    message=_("There is already a calibration from this instant."),
+                )
+                for owner in ("pair", "group", "instrument")
             ),
         ]
 

@@ -114,7 +114,6 @@ class Sight(models.Model):
             models.UniqueConstraint(
                 name="network_sight_position_once",
                 fields=["level_check", "position"],
-                deferrable=models.Deferrable.DEFERRED,
                 violation_error_message=_("Two sights stand on the same line."),
             ),
             models.CheckConstraint(

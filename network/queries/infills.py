@@ -99,14 +99,19 @@ class Estimator:
         return estimate
 
     def _winter(self) -> Floats:
-        """Carry the ratio from 1 on the day before the ice, over the gaugings, to 1 after it."""
-        first = (self.span.first_day - self.days[0].astype(date)).days
-        last = (self.span.last_day - self.days[0].astype(date) + timedelta(days=1)).days
+        """Carry the ratio between the gaugings of the period, held before the first and after."""
+        first, last = (
+            (day - self.days[0].astype(date)).days
+            for day in (self.span.first_day, self.span.last_day + timedelta(days=1))
+        )
         times, ratios = self.gauged
         inside = (times > first) & (times < last)
+        if not inside.any():
+            return np.full(len(self.days), np.nan)
+        held = ratios[inside]
         return infill.winter_ratio(
             np.arange(len(self.days), dtype=np.float64) + 0.5,  # the middle of each day
             self.open_water_m3s(),
             gauged_times=np.array([first, *times[inside], last], np.float64),
-            ratios=np.array([1.0, *ratios[inside], 1.0]),
+            ratios=np.array([held[0], *held, held[-1]]),
         ).flow_m3s

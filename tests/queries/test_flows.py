@@ -5,7 +5,7 @@ from datetime import UTC, date, datetime, timedelta
 import numpy as np
 import pytest
 
-from network.models import Infill, Note, RatingPeriod, SensorSetting
+from network.models import Gauging, Infill, Note, RatingPeriod, SensorSetting
 from network.numerics.marks import Mark
 from network.queries import flows
 from network.services import infills, notes, ratings, series, typed_flows
@@ -219,3 +219,19 @@ def type_flow(station, keeper, day, flow_m3s):
         station=station, day=day, flow_m3s=flow_m3s, method="by eye", reason="ice", by=keeper,
         at=AT,
     )  # fmt: skip
+
+
+def test_a_winter_ratio_scales_the_open_water_flow_by_the_gauging_under_ice(steady, keeper):
+    # Open-water flow 6 m³/s, 1.5 m³/s gauged at noon of 5 February: the ratio 0.25 is held.
+    note(steady, keeper, cause=Note.Cause.ICE, treatment=Note.Flows.ESTIMATED)
+    infill(steady, keeper, Infill.Method.WINTER_RATIO, percent=30)
+    assert np.isnan(days(steady).flow_m3s[3:6]).all()  # no gauging, no estimate
+    noon = datetime(2024, 2, 5, 12, tzinfo=UTC)
+    Gauging.objects.create(
+        station=steady, started_at=noon - HOUR, ended_at=noon + HOUR, discharge_m3s=1.5,
+        state=Gauging.State.SIGNED, signed_at=noon, signed_by=keeper, recorded_at=noon,
+        recorded_by=keeper,
+    )  # fmt: skip
+    found = days(steady)
+    assert found.flow_m3s[2:7].tolist() == [6.0, 1.5, 1.5, 1.5, 6.0]
+    assert (found.marks[3:6] == Mark.ESTIMATED | Mark.ICE_OR_BACKWATER).all()
