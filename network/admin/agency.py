@@ -13,6 +13,7 @@ from django.utils.translation import gettext_lazy as _
 
 from network.admin.acting import Filled, RegistryAdmin, ServedAdmin
 from network.admin.forms import StaffForm
+from network.admin.intervals import IntervalPages, interval_verb
 from network.models import Agency, KindInterval, Office, WorkingRules
 from network.services import agency as agency_acts
 
@@ -84,9 +85,10 @@ class AgencyAdmin(OnlyRow):
 
 
 @admin.register(WorkingRules)
-class WorkingRulesAdmin(OnlyRow):
+class WorkingRulesAdmin(IntervalPages, OnlyRow):
     """Limits and intervals."""
 
+    verbs = (interval_verb(WorkingRules),)
     fieldsets = (
         (
             _("Levels and gauges"),
@@ -142,8 +144,10 @@ class WorkingRulesAdmin(OnlyRow):
 
 
 @admin.register(KindInterval)
-class KindIntervalAdmin(RegistryAdmin):
+class KindIntervalAdmin(IntervalPages, RegistryAdmin):
     """How often instruments of a kind are calibrated."""
+
+    verbs = (interval_verb(KindInterval),)
 
     list_display = ("kind", "months", "hours")
 

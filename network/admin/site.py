@@ -1,15 +1,15 @@
 """The agency's own staff site."""
 
-from collections.abc import Sequence
 from typing import Any
 
 from django.contrib.admin import AdminSite
 from django.db import models
 from django.db.models.base import ModelBase
 from django.http import HttpRequest, HttpResponse
-from django.urls import reverse
+from django.urls import URLPattern, URLResolver, reverse
 from django.utils.translation import gettext_lazy as _
 
+from network.admin import calendar_links, work
 from network.queries import desk
 
 OUR_APPS = {"network", "reports"}
@@ -30,20 +30,24 @@ class StaffSite(AdminSite):
         own = [model for model in given if model._meta.app_label in OUR_APPS]
         super().register(own, admin_class, **options)
 
+    def get_urls(self) -> list[URLPattern | URLResolver]:
+        """Add the pages that belong to no single book."""
+        return [*work.urls(self), *calendar_links.urls(self), *super().get_urls()]
+
     def index(self, request: HttpRequest, extra_context: Any = None) -> HttpResponse:
-        """Show work due, own drafts, stations, and what the machine is busy with."""
+        """Show the work due, own drafts, and what the machine is busy with."""
         context = {
-            "work_due": self.work_due(request),
+            **self.work_due(request),
             "drafts": [_link(self, row) for row in desk.drafts_of(request.user)],
-            "stations": [_link(self, row) for row in desk.stations()],
             "jobs": desk.latest_jobs(),
             **(extra_context or {}),
         }
         return super().index(request, context)
 
-    def work_due(self, request: HttpRequest) -> Sequence[Any]:
-        """Return the lines of the work list for this person; the block `work_due` shows them."""
-        return []
+    def work_due(self, request: HttpRequest) -> dict[str, Any]:
+        """Return the work list for those who may see stations, nothing for others."""
+        may_look = request.user.has_perm("network.view_station")
+        return work.list_context(request) if may_look else {}
 
 
 def _link(site: StaffSite, row: models.Model) -> dict[str, Any]:

@@ -12,6 +12,8 @@ from django.utils.translation import gettext_lazy as _
 
 from network.admin.acting import RegistryAdmin
 from network.admin.children import ChildRows
+from network.admin.intervals import IntervalPages, interval_verb
+from network.admin.work import panel_context
 from network.models import Document, OperationPeriod, SiteCriterion, SiteSurvey, Station
 
 
@@ -22,7 +24,7 @@ class OperationPeriodRows(ChildRows):
 
 
 @admin.register(Station)
-class StationAdmin(RegistryAdmin):
+class StationAdmin(IntervalPages, RegistryAdmin):
     """Stations."""
 
     list_display = ("code", "name", "river", "kind", "office")
@@ -33,6 +35,7 @@ class StationAdmin(RegistryAdmin):
     inlines = (OperationPeriodRows,)
     figure_fields = frozenset({"kind", "unrated_because", "catchment_km2"})
     change_form_template = "admin/network/station/change_form.html"
+    verbs = (interval_verb(Station),)
     fieldsets = (
         (None, {"fields": ("code", "name", "river", "basin", "office")}),
         (_("Before you go"), {"fields": ("hazards", "safety_notes", "access_notes")}),
@@ -69,6 +72,8 @@ class StationAdmin(RegistryAdmin):
         """Add the ways from the station to everything that belongs to it."""
         station = options.get("obj")
         context["belongings"] = self._belongings(request, station) if station else []
+        if station:
+            context.update(panel_context(request, station=station.pk))
         return super().render_change_form(request, context, **options)
 
     def _belongings(self, request: HttpRequest, station: Station) -> list[dict[str, str]]:

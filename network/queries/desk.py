@@ -1,18 +1,13 @@
-"""What a person finds on the desk: stations, own drafts, work of the machine."""
+"""What a person finds on the desk: own drafts, work of the machine."""
 
 from collections.abc import Sequence
 from itertools import chain
 
 from django.db import models
 
-from network.models import Gauging, Job, LevelCheck, Person, Station, Visit
+from network.models import Gauging, Job, LevelCheck, Person, Visit
 
 JOBS_SHOWN = 8
-
-
-def stations() -> models.QuerySet[Station]:
-    """Return all stations with their offices, by code."""
-    return Station.objects.select_related("office").order_by("code")
 
 
 def drafts_of(person: Person) -> Sequence[models.Model]:

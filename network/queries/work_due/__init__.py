@@ -1,0 +1,1 @@
+"""Everything that is due, rule by rule, and the one list made of it."""
