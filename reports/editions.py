@@ -49,6 +49,12 @@ def issued_of(station: Station, first_day: date) -> Edition | None:
     return rows.filter(state=Edition.State.ISSUED).first()
 
 
+def issued_in(first_day: date) -> list[Edition]:
+    """Return the issued editions of the water year that starts on a day, by station."""
+    rows = Edition.objects.filter(first_day=first_day, state=Edition.State.ISSUED)
+    return list(rows.select_related("station").order_by("station__code"))
+
+
 def changed_since(edition: Edition) -> list[DayChange]:
     """Compute the year again and return the days that differ from the edition's data.
 

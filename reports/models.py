@@ -3,6 +3,7 @@
 from django.conf import settings
 from django.db import models
 from django.db.models import Q
+from django.utils.translation import gettext as _t
 from django.utils.translation import gettext_lazy as _
 
 from network.models.acts import history
@@ -81,7 +82,9 @@ class Edition(models.Model):
         ]
 
     def __str__(self) -> str:
-        return f"{self.station} {self.year_label}, {self.number}"
+        return _t("{station}, {year}, edition {number}").format(
+            station=self.station, year=self.year_label, number=self.number
+        )
 
 
 class Volume(models.Model):

@@ -1,11 +1,15 @@
 """Acts upon yearbooks: compile, issue, supersede, bind; and the proof that numbers still hold."""
 
 import hashlib
-from collections.abc import Callable, Sequence
+from collections.abc import Sequence
+from dataclasses import dataclass
 from datetime import datetime, timedelta
+from importlib import import_module
 from pathlib import Path
+from typing import Any
 
 from django.conf import settings
+from django.core.checks import run_checks
 from django.utils import timezone
 from django.utils.translation import gettext as _
 
@@ -13,16 +17,28 @@ from network.formats import kept_files
 from network.models import Person, Station
 from network.numerics.marks import Mark
 from network.queries import clock, readiness, station_years
-from network.services import jobs
 from network.services.acts import Refusal, open_act, required_reason
-from reports import editions, particulars, rendering, volumes
+from network.services.jobs import Report, ask_for, kind
+from reports import editions, particulars
 from reports.content import book
 from reports.models import Edition, Volume
 from reports.yearbook import Yearbook
 
 COMPILING = "yearbook"
 SWEPT_AFTER = timedelta(days=1)
-Progress = Callable[[int, int], None]
+
+
+def printer(module: str) -> Any:
+    """Load a module that prints: only who prints needs its system libraries and waits for them.
+
+    Refuses, naming the packages to install, where the system lacks the libraries.
+    """
+    try:
+        return import_module(f"reports.{module}")
+    except OSError as error:
+        lacking = run_checks(tags=["printing"])
+        told = " ".join(f"{message.msg} {message.hint}" for message in lacking)
+        raise Refusal(told or str(error)) from error
 
 
 def _no_progress(_done: int, _total: int) -> None:
@@ -37,7 +53,7 @@ def compile_edition(
     at: datetime,
     reason: str = "",
     language: str = "",
-    progress: Progress = _no_progress,
+    progress: Report = _no_progress,
 ) -> Edition:
     """Compile the next edition of a station's year: PDF, data and the hash of the numbers.
 
@@ -103,6 +119,7 @@ def bind(*, bound: Sequence[Edition], title: str, by: Person, at: datetime) -> V
         raise Refusal(_("Only issued editions are bound."))
     if len({edition.first_day for edition in bound}) > 1:
         raise Refusal(_("A volume holds one water year."))
+    volumes = printer("volumes")
     ordered = sorted(bound, key=lambda edition: edition.station.code)
     with kept_files.incoming(_folder()) as file:
         own = clock.agency()
@@ -136,11 +153,11 @@ def sweep(*, at: datetime) -> list[Path]:
 def ask_to_compile(*, station: Station, year: int, language: str, by: Person, at: datetime) -> None:
     """Have an edition compiled as long work."""
     subject = " · ".join([station.code, str(year), language, by.username])
-    jobs.ask_for(kind=COMPILING, subject=subject, by=by, at=at)
+    ask_for(kind=COMPILING, subject=subject, by=by, at=at)
 
 
-@jobs.kind(COMPILING)
-def _compile_as_asked(subject: str, report: Progress) -> str:
+@kind(COMPILING)
+def _compile_as_asked(subject: str, report: Report) -> str:
     code, year, language, username = subject.split(" · ")
     edition = compile_edition(
         station=Station.objects.get(code=code),
@@ -204,11 +221,28 @@ def _save_issued(edition: Edition, *, reason: str) -> Edition:
     return edition
 
 
+@dataclass(frozen=True)
+class Owed:
+    """What must be explained before an edition can be issued."""
+
+    points: Sequence[str]
+    earlier: Edition | None
+
+
+def owed(edition: Edition) -> Owed:
+    """Return what is open now, and the issued edition that would be superseded."""
+    year = station_years.calendar().year_of(edition.first_day)
+    return Owed(
+        points=_open_points(edition.station, year),
+        earlier=editions.issued_of(edition.station, edition.first_day),
+    )
+
+
 def _open_points(station: Station, year: int) -> list[str]:
     return readiness.open_points(station, station_years.year_of_station(station, year))
 
 
-def _write_files(edition: Edition, year: int, progress: Progress = _no_progress) -> None:
+def _write_files(edition: Edition, year: int, progress: Report = _no_progress) -> None:
     """Compile content, PDF and data and name them by their hashes."""
     progress(0, 2)
     try:
@@ -218,7 +252,7 @@ def _write_files(edition: Edition, year: int, progress: Progress = _no_progress)
     except LookupError as error:
         raise Refusal(str(error)) from error
     progress(1, 2)
-    pdf = rendering.render(content, csv=values)
+    pdf = printer("rendering").render(content, csv=values)
     edition.numbers_sha256 = hashlib.sha256(values).hexdigest()
     edition.csv = _name_of(kept_files.keep(values, folder=_folder(), ending=".csv"))
     edition.pdf = _name_of(kept_files.keep(pdf, folder=_folder(), ending=".pdf"))
