@@ -74,7 +74,7 @@ def hold(
     known = [row for row in rows if stages_m[row.pk] is not None]
     times_s = np.array([in_force.seconds(mid_time(row)) for row in known], np.int64)
     stage_m = np.array([stages_m[row.pk] for row in known], np.float64)
-    flow_m3s = rate(times_s, stage_m, periods=periods, gap_limit_s=0).flow_m3s if known else []
+    flow_m3s = rate(times_s, stage_m, periods=periods, gap_limit_s=0).flow_m3s
     rated = {
         row.pk: None if np.isnan(flow) else float(flow)
         for row, flow in zip(known, flow_m3s, strict=True)

@@ -1,116 +1,44 @@
 """Acts upon ratings: versions drafted and approved, periods in force, shift tables."""
 
 from collections.abc import Sequence
-from dataclasses import dataclass
 from datetime import datetime
+from typing import Any
 
 from django.utils.translation import gettext as _
 
-from network.models import (
-    Curve,
-    CurveBand,
-    CurveGauging,
-    CurvePoint,
-    CurveSegment,
-    Gauging,
-    Person,
-    RatingPeriod,
-    ShiftPoint,
-    ShiftTable,
-    Station,
-)
-from network.numerics.curves import Segment, SegmentCurve, joint_gaps
-from network.numerics.sentences import Refused
-from network.queries import clock, curves, in_force
+from network.models import Curve, Person, RatingPeriod, ShiftPoint, ShiftTable, Station
+from network.queries import clock, in_force
 from network.services import acts
-from network.services.acts import Refusal, open_act
+from network.services.acts import Refusal, lock_station, open_act
+from network.services.rating_drafts import Content, GaugingChoice, Relation, Use, draft, redraft
 
-JOINT_LIMIT = 0.005  # neighbouring segments meet within 0.5 %, unless told so
-
-
-@dataclass(frozen=True, kw_only=True)
-class Use:
-    """The range of use of a rating version, and what its gaugings cover."""
-
-    lowest_use_m: float
-    highest_use_m: float
-    extrapolate_low_m: float | None = None
-    extrapolate_high_m: float | None = None
-    gauged_lowest_m: float | None = None
-    gauged_highest_m: float | None = None
-    scatter_percent: float | None = None
-
-
-@dataclass(frozen=True, kw_only=True)
-class Relation:
-    """The relation itself: segments, or a table with its rule and its stage of zero flow."""
-
-    segments: Sequence[Segment] = ()
-    points: Sequence[tuple[float, float]] = ()  # stage m, flow m³/s
-    form: str = Curve.Form.SEGMENTS
-    h0_m: float | None = None
-
-
-@dataclass(frozen=True, kw_only=True)
-class GaugingChoice:
-    """A gauging a version looked at; left out when a reason is given."""
-
-    gauging: Gauging
-    left_out_because: str = ""
-    deviation_percent: float | None = None
-
-
-def draft(
-    *,
-    station: Station,
-    number: str,
-    relation: Relation,
-    use: Use,
-    reason: str,
-    by: Person,
-    at: datetime,
-    gaugings: Sequence[GaugingChoice] = (),
-    band: Sequence[tuple[float, float]] = (),
-    joints_may_gap: bool = False,
-) -> Curve:
-    """Write a rating version as a draft; band is stage m and U₉₅ %. Refuses what is no curve."""
-    if not station.is_rated:
-        raise Refusal(_("This station is not rated here."))
-    verb = _("drafted rating version %(number)s") % {"number": number}
-    with open_act(verb, by=by, at=at, reason=reason, station=station):
-        curve = Curve.objects.create(
-            station=station,
-            number=number.strip(),
-            form=relation.form,
-            h0_m=relation.h0_m,
-            reason=acts.required_reason(reason),
-            recorded_by=by,
-            recorded_at=at,
-            **vars(use),
-        )
-        _write_relation(curve, relation)
-        CurveBand.objects.bulk_create(
-            CurveBand(curve=curve, stage_m=stage, u95_percent=percent) for stage, percent in band
-        )
-        for choice in gaugings:
-            CurveGauging.objects.create(
-                curve=curve,
-                gauging=choice.gauging,
-                is_used=not choice.left_out_because,
-                left_out_because=choice.left_out_because,
-                deviation_percent=choice.deviation_percent,
-            )
-        _refuse_what_is_no_curve(curve, joints_may_gap=joints_may_gap)
-    return curve
+__all__ = [
+    "Content",
+    "GaugingChoice",
+    "Relation",
+    "Use",
+    "add_shift_table",
+    "approve",
+    "draft",
+    "put_in_force",
+    "redraft",
+    "replace_period",
+    "withdraw_period",
+    "withdraw_shift_table",
+    "withdraw_version",
+]
 
 
 def approve(*, curve: Curve, by: Person, at: datetime) -> Curve:
-    """Approve a draft: from then on it never changes."""
+    """Approve a draft: from then on it never changes.
+
+    Where the agency asks for two pairs of eyes, none of those who drafted it may approve it.
+    """
     if curve.state == Curve.State.APPROVED:
         raise Refusal(_("This version is already approved."))
     if not curve.stands:
         raise Refusal(_("A withdrawn version cannot be approved."))
-    if clock.agency().approver_differs and curve.recorded_by_id == by.pk:
+    if clock.agency().approver_differs and by.pk in _authors(curve):
         raise Refusal(_("A version is approved by someone else than its author."))
     verb = _("approved rating version %(number)s") % {"number": curve.number}
     with open_act(verb, by=by, at=at, station=curve.station):
@@ -136,8 +64,12 @@ def put_in_force(
     by: Person,
     at: datetime,
     reason: str,
+    until: datetime | None = None,
 ) -> RatingPeriod:
-    """Put an approved version in force from an instant, or say that from then on none is."""
+    """Put an approved version in force from an instant, or say that from then on none is.
+
+    With `until` it holds for a season: from then on what was in force before it returns.
+    """
     if curve is not None:
         _refuse_version_for(station, curve)
     verb = (
@@ -145,27 +77,44 @@ def put_in_force(
         if curve
         else _("ended the rating in force")
     )
-    with open_act(verb, by=by, at=at, reason=reason, station=station):
-        period = RatingPeriod.objects.create(
-            station=station,
-            curve=curve,
-            effective_from=effective_from,
-            reason=acts.required_reason(reason),
-            recorded_by=by,
-            recorded_at=at,
-        )
+    signed: dict[str, Any] = {"by": by, "at": at, "reason": reason}
+    with open_act(verb, by=by, at=at, reason=reason.strip(), station=station):
+        lock_station(station)
+        if until is not None:
+            before = _returning(station, effective_from, until)
+            _begin(station, before.curve, until, **signed)
+        period = _begin(station, curve, effective_from, **signed)
         acts.raise_record_version(station)
     return period
 
 
 def withdraw_period(*, period: RatingPeriod, by: Person, at: datetime, reason: str) -> None:
     """Withdraw a period and its shift tables; the version before then holds on."""
+    station = period.station
     verb = _("withdrew a period of a rating")
-    with open_act(verb, by=by, at=at, reason=reason, station=period.station):
-        for table in period.shift_tables.standing():
+    with open_act(verb, by=by, at=at, reason=reason.strip(), station=station):
+        lock_station(station)
+        row = RatingPeriod.objects.get(pk=period.pk)
+        for table in row.shift_tables.standing():
             acts.withdraw(table, by=by, at=at, reason=reason)
-        acts.withdraw(period, by=by, at=at, reason=reason)
-        acts.raise_record_version(period.station)
+        acts.withdraw(row, by=by, at=at, reason=reason)
+        acts.raise_record_version(station)
+
+
+def replace_period(
+    *, period: RatingPeriod, curve: Curve | None, by: Person, at: datetime, reason: str
+) -> RatingPeriod:
+    """Withdraw a period and put another version in force from the same instant, as one act.
+
+    Its shift tables were made for the version that is withdrawn, and go with it.
+    """
+    verb = _("replaced a period of a rating")
+    signed: dict[str, Any] = {"by": by, "at": at, "reason": reason}
+    with open_act(verb, by=by, at=at, reason=reason.strip(), station=period.station):
+        withdraw_period(period=period, **signed)
+        return put_in_force(
+            station=period.station, curve=curve, effective_from=period.effective_from, **signed
+        )
 
 
 def add_shift_table(
@@ -182,8 +131,10 @@ def add_shift_table(
     _refuse_start_outside(period, effective_from)
     if not points:
         raise Refusal(_("A shift table needs at least one stage and shift."), field="points")
-    with open_act(_("added a shift table"), by=by, at=at, reason=reason, station=period.station):
-        table = ShiftTable.objects.create(
+    verb = _("added a shift table")
+    with open_act(verb, by=by, at=at, reason=reason.strip(), station=period.station):
+        lock_station(period.station)
+        table = ShiftTable(
             period=period,
             effective_from=effective_from,
             joins=joins,
@@ -191,6 +142,8 @@ def add_shift_table(
             recorded_by=by,
             recorded_at=at,
         )
+        table.full_clean()
+        table.save()
         for stage_m, shift_m in points:
             ShiftPoint.objects.create(table=table, stage_m=stage_m, shift_m=shift_m)
         acts.raise_record_version(period.station)
@@ -200,31 +153,53 @@ def add_shift_table(
 def withdraw_shift_table(*, table: ShiftTable, by: Person, at: datetime, reason: str) -> None:
     """Withdraw a shift table; the one before it then holds on."""
     station = table.period.station
-    with open_act(_("withdrew a shift table"), by=by, at=at, reason=reason, station=station):
-        acts.withdraw(table, by=by, at=at, reason=reason)
+    verb = _("withdrew a shift table")
+    with open_act(verb, by=by, at=at, reason=reason.strip(), station=station):
+        lock_station(station)
+        row = ShiftTable.objects.get(pk=table.pk)
+        acts.withdraw(row, by=by, at=at, reason=reason)
         acts.raise_record_version(station)
 
 
-def _write_relation(curve: Curve, relation: Relation) -> None:
-    for segment in relation.segments:
-        CurveSegment.objects.create(curve=curve, **vars(segment))
-    for stage_m, flow_m3s in relation.points:
-        CurvePoint.objects.create(curve=curve, stage_m=stage_m, flow_m3s=flow_m3s)
+def _authors(curve: Curve) -> set[int]:
+    """Return the keys of all who wrote a draft of this version."""
+    return {curve.recorded_by_id, *curve.history.values_list("recorded_by", flat=True)}
 
 
-def _refuse_what_is_no_curve(curve: Curve, *, joints_may_gap: bool) -> None:
-    try:
-        kernel = curves.kernel_curve(curve)
-    except Refused as refused:
-        raise Refusal(_(refused.sentence.text).format(**refused.sentence.values)) from refused
-    if isinstance(kernel, SegmentCurve) and not joints_may_gap:
-        gaps = joint_gaps(kernel)
-        if len(gaps) and abs(gaps).max() > JOINT_LIMIT:
-            raise Refusal(
-                _("The segments do not meet: at a joint they differ by %(gap).1f %%.")
-                % {"gap": 100 * abs(gaps).max()},
-                field="segments",
-            )
+def _begin(
+    station: Station,
+    curve: Curve | None,
+    effective_from: datetime,
+    *,
+    by: Person,
+    at: datetime,
+    reason: str,
+) -> RatingPeriod:
+    row = RatingPeriod(
+        station=station,
+        curve=curve,
+        effective_from=effective_from,
+        reason=acts.required_reason(reason),
+        recorded_by=by,
+        recorded_at=at,
+    )
+    row.full_clean()
+    row.save()
+    return row
+
+
+def _returning(station: Station, effective_from: datetime, until: datetime) -> RatingPeriod:
+    """Return the period in force before a season; refuse where none is, or another starts in it."""
+    if until <= effective_from:
+        raise Refusal(_("The season ends after it starts."), field="until")
+    chain = RatingPeriod.objects.filter(station=station)
+    before: RatingPeriod | None = in_force.at(chain, effective_from)
+    if before is None:
+        raise Refusal(_("Before the season no rating is in force that could return."))
+    within = chain.standing().filter(effective_from__gt=effective_from, effective_from__lte=until)
+    if within.exists():
+        raise Refusal(_("Another period starts within the season."), field="until")
+    return before
 
 
 def _refuse_version_for(station: Station, curve: Curve) -> None:
