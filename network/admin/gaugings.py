@@ -14,96 +14,21 @@ from django.utils.translation import gettext_lazy as _
 
 from network.admin import gauging_form, gauging_lines
 from network.admin.acting import Filled, ServedAdmin
-from network.admin.children import ChildCards, ChildRows
+from network.admin.gauging_children import OF_METHOD, StageReadings
 from network.admin.gauging_form import GaugingForm
 from network.admin.gauging_pages import shown_answer, stored_answer
 from network.admin.gauging_workbook_pages import WorkbookPages
 from network.admin.verbs import NoReasonForm, Verb
-from network.models import (
-    BoatTrack,
-    Channel,
-    FloatReach,
-    Gauging,
-    StageReading,
-    TracerInjection,
-    Transect,
-    VesselFill,
-    WeirHead,
-)
+from network.models import Channel, Gauging
 from network.queries import gaugings as answers
 from network.services import gaugings
 
 MAY_CHANGE = "network.change_gauging"
 
 
-class StageReadings(ChildRows):
-    """Stage read during the gauging."""
-
-    model = StageReading
-    prefix = "stages"
-    fields = ("read_at", "reading_m", "plate")
-    can_delete = True
-
-    def get_extra(self, request: HttpRequest, obj: Any = None, **options: Any) -> int:
-        """Offer start and end on a new sheet."""
-        return 0 if obj is not None and obj.pk else 2
-
-
-class Transects(ChildRows):
-    """Crossings of a moving boat."""
-
-    model = Transect
-    fields = ("starting_bank", "discharge_m3s", "seconds", "is_used")
-    extra = 4
-    can_delete = True
-
-
-class Track(ChildCards):
-    """How the boat knew its path."""
-
-    model = BoatTrack
-    max_num = extra = 1
-
-
-class Reach(ChildCards):
-    """The reach of the floats."""
-
-    model = FloatReach
-    max_num = extra = 1
-
-
-class Fills(ChildRows):
-    """Fills of a vessel."""
-
-    model = VesselFill
-    fields = ("volume_m3", "seconds")
-    extra = 3
-    can_delete = True
-
-
-class Injection(ChildCards):
-    """The tracer put in."""
-
-    model = TracerInjection
-    max_num = extra = 1
-
-
-class Head(ChildCards):
-    """The head on a weir."""
-
-    model = WeirHead
-    max_num = extra = 1
-
-
-OF_METHOD: dict[str, tuple[type[admin.options.InlineModelAdmin], ...]] = {
-    Gauging.Method.MOVING_BOAT: (Transects, Track),
-    Gauging.Method.FLOAT: (Reach,),
-    Gauging.Method.VOLUMETRIC: (Fills,),
-    Gauging.Method.DILUTION: (Injection,),
-    Gauging.Method.WEIR: (Head,),
-}
 HEADING = ("station", "visit", "started_at", "ended_at", "way", "party")
 METER = ("pair", "sounding", "spin_test_seconds", "starting_bank")
+OF_THE_FORM = ("starting_bank", "floats", "samples")
 STATED = ("stated_discharge_m3s", "stated_u95_percent")
 
 
@@ -172,6 +97,8 @@ class GaugingAdmin(WorkbookPages, ServedAdmin):
         by_meter = method == Gauging.Method.VELOCITY_AREA
         more = {Gauging.Method.FLOAT: ("floats",), Gauging.Method.DILUTION: ("samples",)}
         middle = METER if by_meter else ("instrument", *more.get(Gauging.Method(method), ()))
+        if obj is not None and signed_or_checked(obj):  # what the form alone knows is no column
+            middle = tuple(name for name in middle if name not in OF_THE_FORM)
         return [
             (None, {"fields": ("method", *HEADING)}),
             (_("What it was measured with"), {"fields": middle}),

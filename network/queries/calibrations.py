@@ -129,8 +129,7 @@ def with_rating(meter: Meter, calibration: Calibration) -> Meter:
 
 
 def _pieces(rows: "list[CalibrationPiece]") -> tuple[Piece, ...]:
-    starts = [row.lowest_n for row in rows[1:]]
-    ends = [*starts, WITHOUT_END]
+    ends = [*(row.lowest_n for row in rows[1:]), WITHOUT_END][: len(rows)]
     return tuple(
         Piece(row.a_ms, row.b_m, row.lowest_n, end if row.highest_n is None else row.highest_n)
         for row, end in zip(rows, ends, strict=True)

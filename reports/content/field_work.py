@@ -11,6 +11,7 @@ from network.models import Calibration, Gauging, LevelCheck
 from network.numerics.arrays import Floats
 from network.numerics.rating import rate
 from network.queries import in_force, levels
+from network.queries.gaugings import stages_of
 from network.queries.station_inputs import rating_periods
 from reports import particulars as p
 from reports.content.particulars import local_day, people, rating_rows
@@ -49,16 +50,10 @@ def gauged(data: YearData, start: datetime | None, end: datetime) -> Gauged:
     rows = rows.select_related("pair__body", "pair__rotor", "calibration")
     found = list(rows.prefetch_related("party").order_by("started_at"))
     middle = [row.started_at + (row.ended_at - row.started_at) / 2 for row in found]
-    stage = np.array([_stage(row) for row in found], np.float64)
+    stages = stages_of(found)  # as the plate zeros in force today have them
+    stage = np.array([stages[row.pk] for row in found], np.float64)
     numbers = list(range(before + 1, before + 1 + len(found)))
     return Gauged(found, numbers, middle, stage, _rated(data, middle, stage))
-
-
-def _stage(row: Gauging) -> float:
-    if row.signed_stage_m is not None:
-        return row.signed_stage_m
-    ends = [at for at in (row.stage_start_m, row.stage_end_m) if at is not None]
-    return float(np.mean(ends)) if ends else np.nan
 
 
 def _rated(data: YearData, at: list[datetime], stage_m: Floats) -> Floats:

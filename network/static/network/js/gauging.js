@@ -130,9 +130,18 @@
       answer.innerHTML = found.answer;
       delete answer.dataset.old;
       showLines(found.lines);
+      glance();
     } catch (error) {
       if (error.name !== "AbortError") answer.dataset.old = "1";
     }
+  };
+
+  // On a phone the figures stand far below the line that is typed: the bar at the foot repeats them.
+  const glance = () => {
+    const link = form.querySelector(".glance");
+    const figure = answer.querySelector("[data-figure=discharge]");
+    link.hidden = !figure;
+    link.textContent = figure ? figure.textContent.trim().replace(/\s+/g, " ") : "";
   };
 
   const showLines = (html) => {
