@@ -28,7 +28,7 @@ def figures(data: YearData) -> Figures:
     return Figures(
         stage=_stage_year(data),
         duration=_duration(data),
-        sketch=_sketch(data.station),
+        sketch=location_sketch(data.station),
         plates=_plates(data),
         flow=None if data.stage_only else _flow_year(data),
         rating=None if data.stage_only else _rating_sheet(data, before),
@@ -121,7 +121,7 @@ def _duration(data: YearData) -> inputs.DurationCurves | None:
     )
 
 
-def _sketch(station: Station) -> inputs.LocationSketch:
+def location_sketch(station: Station) -> inputs.LocationSketch:
     """Place the station among those next to it."""
     others = list(Station.objects.filter(basin=station.basin).exclude(pk=station.pk))
     others.sort(
