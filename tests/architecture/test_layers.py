@@ -105,8 +105,9 @@ WRITES = {
 }
 
 
-# Calls of these names that write no row: a workbook or a PDF saved, a row the admin saves.
+# Calls of these names that write no row: a workbook or a PDF saved, a service of that name.
 NOT_A_ROW = {
+    "network/admin/gaugings.py:gaugings.save",
     "network/formats/gauging_sheet_writer.py:workbook.save",
     "reports/volumes.py:volume.save",
 }
