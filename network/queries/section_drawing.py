@@ -5,7 +5,7 @@ from dataclasses import dataclass
 from network.queries.gaugings import Answer
 
 WIDTH, HEIGHT = 400.0, 250.0
-LEFT, RIGHT = 34.0, 8.0
+LEFT, RIGHT = 46.0, 8.0
 SURFACE, BED = 118.0, 226.0  # y of the water surface and of the greatest depth
 SHARE_TOP = 16.0
 
@@ -48,8 +48,6 @@ class Drawing:
     marks: tuple[Mark, ...]
     bars: tuple[Bar, ...]
     levels: tuple[Level, ...]
-    width_text: str
-    depth_text: str
     first_m: float
     last_m: float
     greatest_m: float
@@ -94,8 +92,6 @@ def drawing(answer: Answer, *, advice: float = 5.0, limit: float = 10.0) -> Draw
         ),
         bars=bars,
         levels=levels,
-        width_text=f"{last - first:g}",
-        depth_text=f"{deepest:g}",
         first_m=first,
         last_m=last,
         greatest_m=deepest,
@@ -134,5 +130,6 @@ def _bars(
         height = round(percent * scale, 1)
         width = round(max(ends[1] - ends[0] - 0.8, 0.5), 1)
         bars.append(Bar(ends[0], SURFACE - 4 - height, width, height, percent, grade))
-    levels = [Level(round(SURFACE - 4 - at * scale, 1), f"{at:g}") for at in (advice, limit)]
+    shown = (advice, limit) if (limit - advice) * scale > 9 else (limit,)  # not on one another
+    levels = [Level(round(SURFACE - 4 - at * scale, 1), f"{at:g}") for at in shown]
     return tuple(bars), tuple(levels)

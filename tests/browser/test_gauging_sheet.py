@@ -86,6 +86,12 @@ def discharge(page):
     return page.locator("[data-figure=discharge]")
 
 
+def answered(page):
+    """Wait until the server has answered a sheet without faults."""
+    page.wait_for_selector("svg.section rect.panel")
+    page.wait_for_selector(".faults", state="detached")
+
+
 def rows_of(page):
     return page.locator("#rows-group .line")
 
@@ -98,7 +104,7 @@ def test_twenty_verticals_are_typed_answered_and_signed(page, where, pair, pictu
             page.click("#rows-group .add-row a")
         type_vertical(page, row)
     edge(page, rows_of(page).count() - 1, "21")
-    page.wait_for_selector("svg.section rect.panel")
+    answered(page)
     assert discharge(page).inner_text().endswith("%")
     picture(page, f"gauging-typed-{page.device}")
     if page.device == "phone":
