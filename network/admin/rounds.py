@@ -60,8 +60,16 @@ class RoundAdmin(ServedAdmin):
         view = self.admin_site.admin_view
         return [
             path("<int:key>/plan/", view(self.plan_view), name="network_round_plan"),
-            path("<int:key>/plan/add/<int:station>/", view(self.add_stop_view), name="network_stop_add"),
-            path("<int:key>/plan/stop/<int:stop>/", view(self.change_stop_view), name="network_stop_edit"),
+            path(
+                "<int:key>/plan/add/<int:station>/",
+                view(self.add_stop_view),
+                name="network_stop_add",
+            ),
+            path(
+                "<int:key>/plan/stop/<int:stop>/",
+                view(self.change_stop_view),
+                name="network_stop_edit",
+            ),
             *super().get_urls(),
         ]
 

@@ -3,10 +3,9 @@
 from typing import Any
 
 from django.contrib.admin import AdminSite
-from django.db import models
 from django.db.models.base import ModelBase
 from django.http import HttpRequest, HttpResponse
-from django.urls import URLPattern, URLResolver, reverse
+from django.urls import URLPattern, URLResolver
 from django.utils.translation import gettext_lazy as _
 
 from network.admin import calendar_links, work
@@ -35,10 +34,9 @@ class StaffSite(AdminSite):
         return [*work.urls(self), *calendar_links.urls(self), *super().get_urls()]
 
     def index(self, request: HttpRequest, extra_context: Any = None) -> HttpResponse:
-        """Show the work due, own drafts, and what the machine is busy with."""
+        """Show the work due with own drafts, and what the machine is busy with."""
         context = {
             **self.work_due(request),
-            "drafts": [_link(self, row) for row in desk.drafts_of(request.user)],
             "jobs": desk.latest_jobs(),
             **(extra_context or {}),
         }
@@ -48,12 +46,3 @@ class StaffSite(AdminSite):
         """Return the work list for those who may see stations, nothing for others."""
         may_look = request.user.has_perm("network.view_station")
         return work.list_context(request) if may_look else {}
-
-
-def _link(site: StaffSite, row: models.Model) -> dict[str, Any]:
-    """Return a row with the address of its page, empty where it has none."""
-    opts = row._meta
-    if not site.is_registered(type(row)):
-        return {"row": row, "kind": opts.verbose_name, "url": ""}
-    url = reverse(f"admin:{opts.app_label}_{opts.model_name}_change", args=[row.pk])
-    return {"row": row, "kind": opts.verbose_name, "url": url}

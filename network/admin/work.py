@@ -19,7 +19,7 @@ from django.utils.translation import gettext as _t
 from django.utils.translation import gettext_lazy as _
 
 from network.admin.fields import DayInput
-from network.admin.work_links import shown
+from network.admin.work_links import draft_address, shown
 from network.models import Station, Stop, Visit, WorkLeft
 from network.queries.work_due import work_list
 from network.queries.work_due.items import SUBJECTS, Kind
@@ -58,8 +58,12 @@ def list_context(request: HttpRequest) -> dict[str, Any]:
     """Return what the work list's template shows to a person."""
     filters = filters_of(request)
     page = _number(request.GET.get("page", "")) or 1
-    found = work_list.work_list(timezone.now(), filters=filters, page=page)
+    found = work_list.work_list(
+        timezone.now(), filters=filters, page=page, agency=getattr(request, "agency", None)
+    )
+    own = [row for row in found.unfinished if row.recorded_by == request.user.pk]
     return {
+        "drafts": [(row, draft_address(row)) for row in own],
         "work": found,
         "work_lines": shown(found.lines, person=request.user),
         "work_filters": filters,
@@ -69,9 +73,11 @@ def list_context(request: HttpRequest) -> dict[str, Any]:
     }
 
 
-def panel_context(request: HttpRequest, **of: int) -> dict[str, Any]:
+def panel_context(
+    request: HttpRequest, *, station: int | None = None, instrument: int | None = None
+) -> dict[str, Any]:
     """Return the work due, with that of the next month, of one station or one instrument."""
-    filters = Filters(within_days=30, with_postponed=True, **of)
+    filters = Filters(within_days=30, with_postponed=True, station=station, instrument=instrument)
     found = work_list.work_list(timezone.now(), filters=filters, per_page=None)
     return {"panel_lines": shown(found.lines, person=request.user)}
 

@@ -10,7 +10,7 @@ from django.utils.translation import gettext_lazy as _
 
 from network.models import Person
 from network.queries.work_due.items import Kind
-from network.queries.work_due.work_list import Line
+from network.queries.work_due.work_list import Line, Unfinished
 
 
 @dataclass(frozen=True)
@@ -77,6 +77,11 @@ class ShownLine:
 def shown(lines: Iterable[Line], *, person: Person) -> list[ShownLine]:
     """Return lines with their links for a person."""
     return [_shown(line, person=person) for line in lines]
+
+
+def draft_address(row: Unfinished) -> str:
+    """Return the page of a draft."""
+    return _address(WAYS[row.kind].page, row.key)
 
 
 def _shown(line: Line, *, person: Person) -> ShownLine:

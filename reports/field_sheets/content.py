@@ -1,7 +1,7 @@
 """What stands on a field sheet: the stop, its station's gauges, last readings, gaugings, rating."""
 
 from collections.abc import Iterable
-from dataclasses import dataclass, field
+from dataclasses import dataclass
 from datetime import date, datetime
 
 import numpy as np
@@ -19,8 +19,18 @@ from network.models import (
 from network.numerics import curves as kernel
 from network.numerics.arrays import Floats
 from network.numerics.marks import Mark
-from network.queries import clock, curves, gauges, in_force, rounds, station_facts, station_years
+from network.queries import (
+    clock,
+    curves,
+    gauges,
+    in_force,
+    next_gaugings,
+    rounds,
+    station_facts,
+    station_years,
+)
 from network.queries.gauges import PlateThen
+from network.queries.next_gaugings import NextGauging
 from network.queries.working_rules import rules
 from reports.content.drawings import location_sketch
 from reports.figures.inputs import LocationSketch
@@ -73,7 +83,7 @@ class StopSheet:
     gaugings: tuple[Gauging, ...]
     version: str
     rating: tuple[RatedStage, ...]
-    bands: tuple[str, ...] = field(default=())
+    band: str
 
     @property
     def rating_columns(self) -> list[tuple[RatedStage, ...]]:
@@ -103,9 +113,10 @@ class RoundSheets:
 def sheets_of(plan: Round, *, at: datetime) -> RoundSheets:
     """Return the field sheets of a round as things stand at an instant."""
     found = rounds.sheet(plan)
-    made = [leg.stop for leg in found.legs]
+    bands = next_gaugings.of_many([leg.stop.station for leg in found.legs], at=at)
     stops = tuple(
-        _stop_sheet(number, leg, of=len(made), at=at) for number, leg in enumerate(found.legs, 1)
+        _stop_sheet(number, leg, of=len(found.legs), at=at, band=bands.get(leg.stop.station_id))
+        for number, leg in enumerate(found.legs, 1)
     )
     return RoundSheets(
         plan=plan,
@@ -117,7 +128,9 @@ def sheets_of(plan: Round, *, at: datetime) -> RoundSheets:
     )
 
 
-def _stop_sheet(number: int, leg: rounds.Leg, *, of: int, at: datetime) -> StopSheet:
+def _stop_sheet(
+    number: int, leg: rounds.Leg, *, of: int, at: datetime, band: NextGauging | None
+) -> StopSheet:
     station = leg.stop.station
     facts = station_facts.at(station, at)
     gaugings = Gauging.objects.filter(station=station, started_at__lte=at)
@@ -136,6 +149,7 @@ def _stop_sheet(number: int, leg: rounds.Leg, *, of: int, at: datetime) -> StopS
         gaugings=tuple(gaugings.order_by("-started_at")[:LAST_GAUGINGS]),
         version=facts.version,
         rating=tuple(_rating(station, facts, at)),
+        band=band.sentence() if band else "",
     )
 
 

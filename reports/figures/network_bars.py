@@ -4,6 +4,7 @@ from collections.abc import Sequence
 from dataclasses import dataclass
 
 import numpy as np
+from matplotlib.ticker import MaxNLocator
 
 from reports.figures import style
 
@@ -55,7 +56,7 @@ def draw_pairs(pairs: Pairs) -> str:
 
 def draw_bars(bars: Bars) -> str:
     """Draw a bar for each class with its count above."""
-    places = np.arange(len(bars.names))
+    places = [float(place) for place in range(len(bars.names))]
     with style.styled():
         figure = style.sheet(WIDTH_MM, 48)
         axes = style.panel(figure, left=9, bottom=11, right=2, top=7)
@@ -66,6 +67,6 @@ def draw_bars(bars: Bars) -> str:
         axes.set_xticks(places, bars.names)
         axes.set_xlabel(bars.axis)
         axes.set_ylim(0, max([*bars.counts, 1]) * 1.15)
-        axes.yaxis.get_major_locator().set_params(integer=True)
+        axes.yaxis.set_major_locator(MaxNLocator(integer=True))
         style.title(axes, bars.count_word)
         return style.svg(figure)

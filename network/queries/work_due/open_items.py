@@ -1,8 +1,8 @@
 """What was begun and not finished: sheets nobody checked, and work left at a visit."""
 
 from collections.abc import Iterator
-from datetime import timedelta
-from typing import Any
+from datetime import date, timedelta
+from typing import Any, NamedTuple
 
 from django.db.models import CharField, F, IntegerField, QuerySet, Value
 from django.db.models.functions import Cast
@@ -11,51 +11,62 @@ from network.models import Gauging, LevelCheck, Visit, WorkLeft
 from network.queries.record_days import RecordDay
 from network.queries.work_due.items import Asked, Item, Kind
 
-NO_TEXT = Value("")
+
+class OpenRow(NamedTuple):
+    """A sheet that nobody checked, with its state, or work left, with its text."""
+
+    kind: Kind
+    key: int
+    station: int
+    office: int
+    since: date
+    text: str
+    recorded_by: int
+
+    @property
+    def is_draft(self) -> bool:
+        """Whether it is a sheet its author has not finished."""
+        return self.kind != Kind.LEFT and self.text == "draft"
 
 
-def items(asked: Asked) -> Iterator[Item]:
-    """Yield unchecked visits, gaugings and level checks, and work left, in one query."""
-    days = asked.rules.check_days
-    visits, gaugings, levels, left = _found(asked, asked.until - timedelta(days=days))
-    for kind, key, station, office, since, text in visits.union(gaugings, levels, left, all=True):
-        every = None if kind == Kind.LEFT else days
-        due_on = since + timedelta(days=every or 0)
-        yield Item(Kind(kind), key, station, office, since, due_on, every, (text,))
+def open_rows(asked: Asked) -> list[OpenRow]:
+    """Return unchecked visits, gaugings and level checks, and work left, in one query.
 
-
-def _found(asked: Asked, last_day: Any) -> tuple[QuerySet[Any], ...]:
-    """Return the rows of each kind alike, so that one union reads them; last_day: of the work."""
-    before = asked.end_of(last_day)
-    # By who checked it, not by state: that column has an index, and few rows have none there.
-    visits = Visit.objects.filter(checked_by=None, arrived_at__lt=before)
-    gaugings = Gauging.objects.filter(checked_by=None, ended_at__lt=before)
-    levels = LevelCheck.objects.filter(checked_by=None, levelled_at__lt=before)
-    left = WorkLeft.objects.filter(done_by=None, visit__arrived_at__lt=asked.end_of(asked.until))
-    return (
-        _alike(asked, visits, Kind.VISIT_OPEN, at="arrived_at"),
-        _alike(asked, gaugings, Kind.GAUGING_OPEN, at="ended_at", text=F("state")),
+    Chosen by who checked or did it: that column has an index, and few rows have none there.
+    """
+    levels = LevelCheck.objects.filter(checked_by=None)
+    rows = [
+        _alike(asked, Visit.objects.filter(checked_by=None), Kind.VISIT_OPEN, at="arrived_at"),
+        _alike(asked, Gauging.objects.filter(checked_by=None), Kind.GAUGING_OPEN, at="ended_at"),
         _alike(asked, levels, Kind.LEVELS_OPEN, at="levelled_at"),
-        _alike(asked, left, Kind.LEFT, at="visit__arrived_at", text=F("text"), of="visit__station"),
-    )
+        _alike(asked, WorkLeft.objects.filter(done_by=None), Kind.LEFT,
+               at="visit__arrived_at", text="text", of="visit__"),
+    ]  # fmt: skip
+    found = rows[0].union(*rows[1:], all=True)
+    return [OpenRow(Kind(kind), *more) for kind, *more in found]
+
+
+def items(asked: Asked, rows: list[OpenRow]) -> Iterator[Item]:
+    """Yield what has waited for longer than a sheet may, and all work left."""
+    for row in rows:
+        every = None if row.kind == Kind.LEFT else asked.rules.check_days
+        due_on = row.since + timedelta(days=every or 0)
+        if due_on <= asked.until:
+            facts = (row.text,)
+            yield Item(row.kind, row.key, row.station, row.office, row.since, due_on, every, facts)
 
 
 def _alike(
-    asked: Asked,
-    rows: QuerySet[Any],
-    kind: Kind,
-    *,
-    at: str,
-    text: Any = NO_TEXT,
-    of: str = "station",
+    asked: Asked, rows: QuerySet[Any], kind: Kind, *, at: str, text: str = "state", of: str = ""
 ) -> QuerySet[Any]:
     if asked.station is not None:
-        rows = rows.filter(**{of: asked.station})
+        rows = rows.filter(**{f"{of}station": asked.station})
     return rows.order_by().values_list(
         Value(kind.value, CharField()),
         Cast("pk", IntegerField()),
-        F(of),
-        F(f"{of}__office"),
-        RecordDay(F(at), of=asked.agency),
+        F(f"{of}station"),
+        F(f"{of}station__office"),
+        RecordDay(at, of=asked.agency),
         Cast(text, CharField()),
+        F(f"{of}recorded_by"),
     )

@@ -53,6 +53,11 @@ class StationRow(NamedTuple):
     first_reading_on: date | None
     last_reading_on: date | None
 
+    @property
+    def place(self) -> str:
+        """Code and name."""
+        return f"{self.code} {self.name}"
+
 
 def station_rows(asked: Asked) -> list[StationRow]:
     """Return all stations, or the one asked for, in one query.

@@ -1,13 +1,13 @@
 """The list of work due: every rule asked once, filtered, counted by kind, a page put into words."""
 
 from collections import Counter
-from collections.abc import Iterable, Mapping
-from dataclasses import dataclass
+from collections.abc import Iterable, Iterator, Mapping
+from dataclasses import dataclass, replace
 from datetime import date, datetime, timedelta
 from itertools import chain
 
-from network.models import Instrument, Postponement
-from network.queries import clock
+from network.models import Agency, Instrument, Postponement, Station
+from network.queries import clock, next_gaugings
 from network.queries.work_due import (
     calibration_items,
     doubt_items,
@@ -17,6 +17,7 @@ from network.queries.work_due import (
     station_items,
 )
 from network.queries.work_due.items import LEAST_URGENT, URGENCY, Asked, Item, Kind
+from network.queries.work_due.open_items import OpenRow
 from network.queries.work_due.station_items import StationRow
 from network.queries.working_rules import rules
 
@@ -57,6 +58,18 @@ class Line:
     reason: str
     is_urgent: bool
     postponed: Postponement | None = None
+    band: str = ""  # of a gauging wanted: where it would narrow the rating most
+
+
+@dataclass(frozen=True)
+class Unfinished:
+    """A draft, so that its author finds it again."""
+
+    kind: Kind
+    key: int
+    place: str
+    since: date
+    recorded_by: int
 
 
 @dataclass(frozen=True)
@@ -72,20 +85,36 @@ class WorkList:
     offices: tuple[tuple[int, str], ...]
     rivers: tuple[str, ...]
     today: date
+    unfinished: tuple[Unfinished, ...] = ()
+
+
+@dataclass(frozen=True)
+class Found:
+    """What the rules found, before filters: stations, sheets not checked, and all items."""
+
+    stations: list[StationRow]
+    open_rows: list[OpenRow]
+    items: Iterable[Item]
 
 
 def work_list(
-    at: datetime, *, filters: Filters = Filters(), page: int = 1, per_page: int | None = PER_PAGE
+    at: datetime,
+    *,
+    filters: Filters = Filters(),
+    page: int = 1,
+    per_page: int | None = PER_PAGE,
+    agency: Agency | None = None,
 ) -> WorkList:
     """Return what is due at an instant, a page of it in words, in a fixed number of queries.
 
-    Counts by kind are those of all kinds under the other filters; per_page None: everything.
+    Counts by kind are those of all kinds under the other filters; per_page None: everything. A list
+    of gaugings alone, or of one station, also says in which band of stage each is wanted.
     """
-    asked = ask(at, filters)
-    stations, found = _found(asked)
-    by_station = {row.pk: row for row in stations}
+    asked = ask(at, filters, agency=agency)
+    found = _found(asked)
+    by_station = {row.pk: row for row in found.stations}
     put_off = _postponements(asked)
-    kept = [item for item in found if _passes(item, filters, by_station)]
+    kept = [item for item in found.items if _passes(item, filters, by_station)]
     shown = kept if filters.with_postponed else [i for i in kept if not _hidden(i, put_off)]
     counts = Counter(item.kind for item in shown)
     chosen = [item for item in shown if filters.kind in (None, item.kind)]
@@ -93,26 +122,29 @@ def work_list(
     size = per_page or max(len(chosen), 1)
     pages = max(-(-len(chosen) // size), 1)
     page = min(max(page, 1), pages)
-    offices = {row.office: row.office_name for row in stations}
+    offices = {row.office: row.office_name for row in found.stations}
+    lines = tuple(
+        _line(item, asked, by_station, offices, put_off)
+        for item in chosen[(page - 1) * size : page * size]
+    )
+    with_bands = filters.kind == Kind.GAUGING or filters.station is not None
     return WorkList(
-        lines=tuple(
-            _line(item, asked, by_station, offices, put_off)
-            for item in chosen[(page - 1) * size : page * size]
-        ),
+        lines=_with_bands(lines, at) if with_bands else lines,
         counts={kind: counts[kind] for kind in Kind if counts[kind]},
         total=len(chosen),
         postponed=sum(_hidden(item, put_off) for item in kept),
         page=page,
         pages=pages,
         offices=tuple(sorted(offices.items(), key=lambda pair: pair[1])),
-        rivers=tuple(sorted({row.river for row in stations})),
+        rivers=tuple(sorted({row.river for row in found.stations})),
         today=asked.today,
+        unfinished=tuple(_unfinished(found.open_rows, by_station)),
     )
 
 
-def ask(at: datetime, filters: Filters = Filters()) -> Asked:
+def ask(at: datetime, filters: Filters = Filters(), *, agency: Agency | None = None) -> Asked:
     """Return the question that all rules are asked at an instant."""
-    own = clock.agency()
+    own = agency or clock.agency()
     today = clock.record_day(at, of=own)
     return Asked(
         today=today,
@@ -126,24 +158,32 @@ def ask(at: datetime, filters: Filters = Filters()) -> Asked:
 
 def number_due(at: datetime, *, filters: Filters = Filters()) -> int:
     """Return how many items are due, those put off too."""
-    _stations, found = _found(ask(at, filters))
-    return sum(1 for _item in found)
+    return sum(1 for _item in _found(ask(at, filters)).items)
 
 
-def _found(asked: Asked) -> tuple[list[StationRow], Iterable[Item]]:
+def _found(asked: Asked) -> Found:
     """Ask every rule that can say something of what is asked."""
     if asked.instrument is not None:
-        return [], calibration_items.items(asked)
-    stations = station_items.station_rows(asked)
+        return Found([], [], calibration_items.items(asked))
+    stations, open_rows = station_items.station_rows(asked), open_items.open_rows(asked)
     of_stations = chain(
         station_items.items(asked, stations),
         safety_items.items(asked),
-        open_items.items(asked),
+        open_items.items(asked, open_rows),
         doubt_items.items(asked),
     )
     if asked.station is not None:
-        return stations, of_stations
-    return stations, chain(of_stations, calibration_items.items(asked))
+        return Found(stations, open_rows, of_stations)
+    return Found(stations, open_rows, chain(of_stations, calibration_items.items(asked)))
+
+
+def _unfinished(
+    rows: Iterable[OpenRow], stations: Mapping[int, StationRow]
+) -> Iterator[Unfinished]:
+    for row in rows:
+        if row.is_draft:
+            place = stations[row.station].place
+            yield Unfinished(row.kind, row.key, place, row.since, row.recorded_by)
 
 
 def _postponements(asked: Asked) -> dict[tuple[str, str], Postponement]:
@@ -155,7 +195,7 @@ def _postponements(asked: Asked) -> dict[tuple[str, str], Postponement]:
 
 
 def _hidden(item: Item, put_off: Mapping[tuple[str, str], Postponement]) -> bool:
-    return bool(put_off) and (item.kind.value, item.subject) in put_off
+    return bool(put_off) and (str(item.kind), item.subject) in put_off
 
 
 def _passes(item: Item, filters: Filters, stations: Mapping[int, StationRow]) -> bool:
@@ -167,7 +207,7 @@ def _passes(item: Item, filters: Filters, stations: Mapping[int, StationRow]) ->
 
 
 def _order(item: Item) -> tuple[int, date, str, int]:
-    return URGENCY.get(item.kind, LEAST_URGENT), item.due_on, item.kind.value, item.key
+    return URGENCY.get(item.kind, LEAST_URGENT), item.due_on, str(item.kind), item.key
 
 
 def _line(
@@ -183,7 +223,7 @@ def _line(
         key=item.key,
         subject=item.subject,
         station=item.station,
-        place=f"{row.code} {row.name}" if row else _instrument(item),
+        place=row.place if row else _instrument(item),
         river=row.river if row else "",
         office=offices.get(item.office, ""),
         since=item.since,
@@ -191,7 +231,17 @@ def _line(
         days_late=(asked.today - item.due_on).days,
         reason=reasons.reason(item, today=asked.today),
         is_urgent=item.kind in URGENCY,
-        postponed=put_off.get((item.kind.value, item.subject)),
+        postponed=put_off.get((str(item.kind), item.subject)),
+    )
+
+
+def _with_bands(lines: tuple[Line, ...], at: datetime) -> tuple[Line, ...]:
+    wanted = [line.station for line in lines if line.kind == Kind.GAUGING]
+    found = next_gaugings.of_many(Station.objects.filter(pk__in=wanted), at=at) if wanted else {}
+    said = {pk: answer.sentence() for pk, answer in found.items()}
+    return tuple(
+        replace(line, band=said.get(line.station or 0, "")) if line.kind == Kind.GAUGING else line
+        for line in lines
     )
 
 
