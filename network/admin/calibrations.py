@@ -12,6 +12,7 @@ from django.utils.translation import gettext_lazy as _
 
 from network.admin.acting import Filled, ServedAdmin
 from network.admin.children import ChildRows
+from network.admin.figure_columns import column
 from network.admin.forms import StaffForm
 from network.admin.gauging_form import numbers_of
 from network.admin.records import stands
@@ -19,6 +20,7 @@ from network.admin.verbs import Verb
 from network.models import Calibration, CalibrationPiece
 from network.queries.calibrations import Piece
 from network.queries.meter_changes import look_back
+from network.queries.printed import fixed_writer
 from network.queries.tow_run_residuals import rating_plot, residuals
 from network.services import calibrations, certificates
 from network.services.acts import Refusal
@@ -68,10 +70,6 @@ class CalibrationAdmin(ServedAdmin):
 
     form = CalibrationForm
     change_form_template = "admin/network/calibration/change_form.html"
-    list_display = (
-        *("__str__", "effective_from", "laboratory", "certificate_number", "source"),
-        *("standard_error_ms", "outcome", "withdrawn_at"),
-    )
     list_filter = ("source", "outcome")
     list_select_related = ("pair__body", "pair__rotor", "group", "instrument")
     date_hierarchy = "effective_from"
@@ -106,6 +104,15 @@ class CalibrationAdmin(ServedAdmin):
     def has_change_permission(self, request: HttpRequest, obj: Any = None) -> bool:
         """Edit no calibration: withdraw it and enter it again."""
         return obj is None and super().has_change_permission(request)
+
+    def get_list_display(self, request: HttpRequest) -> list[Any]:
+        """Write the standard error as the agency writes numbers."""
+        own = request.agency  # type: ignore[attr-defined]
+        return [
+            *("__str__", "effective_from", "laboratory", "certificate_number", "source"),
+            column("standard_error_ms", _("standard error, m/s"), fixed_writer(own, 4)),
+            *("outcome", "withdrawn_at"),
+        ]
 
     def get_fieldsets(self, request: HttpRequest, obj: Any = None) -> Any:
         """Leave out the box of runs once they are stored."""

@@ -14,6 +14,7 @@ from django.utils.translation import gettext_lazy as _
 
 from network.admin import gauging_form, gauging_lines
 from network.admin.acting import Filled, ServedAdmin
+from network.admin.figure_columns import column
 from network.admin.gauging_children import OF_METHOD, StageReadings
 from network.admin.gauging_form import GaugingForm
 from network.admin.gauging_pages import shown_answer, stored_answer
@@ -21,6 +22,7 @@ from network.admin.gauging_workbook_pages import WorkbookPages
 from network.admin.verbs import NoReasonForm, Verb
 from network.models import Channel, Gauging
 from network.queries import gaugings as answers
+from network.queries.printed import fixed_writer, flow_writer
 from network.services import gaugings
 
 MAY_CHANGE = "network.change_gauging"
@@ -50,10 +52,6 @@ class GaugingAdmin(WorkbookPages, ServedAdmin):
     form = GaugingForm
     change_form_template = "admin/network/gauging/change_form.html"
     change_list_template = "admin/network/gauging/change_list.html"
-    list_display = (
-        *("station", "started_at", "method", "way", "signed_stage_m", "discharge_m3s"),
-        *("u95_percent", "signed_deviation_percent", "state"),
-    )
     list_filter = ("state", "method", "way", "station")
     list_select_related = ("station",)
     date_hierarchy = "started_at"
@@ -90,6 +88,20 @@ class GaugingAdmin(WorkbookPages, ServedAdmin):
         """Edit drafts only: a signed gauging is reopened with a reason."""
         may = super().has_change_permission(request, obj)
         return may and (obj is None or obj.state == Gauging.State.DRAFT)
+
+    def get_list_display(self, request: HttpRequest) -> list[Any]:
+        """Write the figures as the agency does."""
+        own = request.agency  # type: ignore[attr-defined]
+        return [
+            *("station", "started_at", "method", "way"),
+            column("signed_stage_m", _("stage, m"), fixed_writer(own, 3)),
+            column("discharge_m3s", _("discharge, m³/s"), flow_writer(own)),
+            column("u95_percent", _("U₉₅, %"), fixed_writer(own, 1)),
+            column(
+                "signed_deviation_percent", _("from the rating, %"), fixed_writer(own, 1, plus=True)
+            ),
+            "state",
+        ]
 
     def get_fieldsets(self, request: HttpRequest, obj: Any = None) -> Any:
         """Show what the method of working notes."""

@@ -18,6 +18,11 @@ from network.formats.faults import FileFault, Sentence
 from network.formats.faults import sentence as _
 
 LARGEST_BYTES = 30 * 2**20  # unpacked: a sheet of this program has less than one
+# What the library raises on a damaged or foreign file; a broken page of XML is a SyntaxError.
+UNREADABLE = (
+    *(zipfile.BadZipFile, InvalidFileException, SyntaxError),
+    *(LookupError, ValueError, TypeError, AttributeError, OSError),
+)
 TIME = re.compile(r"([01]?\d|2[0-3])[:.h]([0-5]\d)(?::[0-5]\d)?")
 Number = float | None
 
@@ -201,7 +206,7 @@ def _opened(stream: IO[bytes]) -> Any:
                 _refuse(_("This workbook is far larger than a gauging sheet."))
         stream.seek(0)
         return load_workbook(stream)
-    except (zipfile.BadZipFile, InvalidFileException, KeyError, ValueError, OSError) as error:
+    except UNREADABLE as error:
         if isinstance(error, FileFault):
             raise
         _refuse(_("This file is no workbook (.xlsx) that can be opened."))

@@ -299,3 +299,12 @@ def test_a_workbook_goes_out_and_comes_back(client, where, pair):
     stream = io.BytesIO(b"no workbook")
     stream.name = "sheet.xlsx"
     assert "no workbook" in client.post(page, {"workbook": stream}).content.decode()
+
+
+def test_the_list_writes_figures_as_the_agency_does(client, where, pair, agency):
+    client.post(ADD, heading(where, pair) | lines() | {"_sign": "1"})
+    type(agency).objects.update(decimal_sign=",")
+    text = client.get(reverse("admin:network_gauging_changelist")).content.decode()
+    assert ">10,2<" in text
+    assert ">1,500<" in text
+    assert ">−54,7<" in text

@@ -8,7 +8,7 @@ from tests import field_world as world
 from tests.browser.conftest import DESK, PHONE
 
 ADD = reverse("admin:network_gauging_add")
-pytestmark = pytest.mark.django_db(transaction=True)
+pytestmark = [pytest.mark.browser, pytest.mark.django_db(transaction=True)]
 
 
 @pytest.fixture

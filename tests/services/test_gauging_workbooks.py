@@ -2,6 +2,7 @@
 
 import io
 import uuid
+import zipfile
 from dataclasses import replace
 
 import pytest
@@ -174,6 +175,18 @@ def test_revolutions_without_seconds_are_refused_and_nothing_is_kept(where, pair
 def test_a_file_that_is_no_workbook_is_refused(where, content):
     with pytest.raises(Refusal, match="no workbook"):
         gauging_workbooks.load(io.BytesIO(content), by=world.person(), at=world.NOON)
+
+
+def test_a_workbook_with_a_damaged_page_is_refused(where, pair):
+    whole, damaged = io.BytesIO(), io.BytesIO()
+    workbook_of(world.sheet(where, pair), uuid.uuid4()).save(whole)
+    with zipfile.ZipFile(whole) as before, zipfile.ZipFile(damaged, "w") as after:
+        for name in before.namelist():
+            data = before.read(name)
+            after.writestr(name, data[: len(data) // 2] if "sheet2" in name else data)
+    damaged.seek(0)
+    with pytest.raises(Refusal, match="no workbook"):
+        gauging_workbooks.load(damaged, by=world.person(), at=world.NOON)
 
 
 def test_a_workbook_of_something_else_is_refused(where, pair):
