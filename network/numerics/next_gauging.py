@@ -26,6 +26,11 @@ class StageBand:
     mean_u95_percent_now: float
     mean_u95_percent_after: float
 
+    @property
+    def share_percent(self) -> float:
+        """The share in %."""
+        return 100 * self.share
+
 
 def narrowing_bands(
     fit: RatingFit,

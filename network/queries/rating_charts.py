@@ -10,7 +10,8 @@ from django.utils.translation import gettext as _
 from network.numerics import curves as kernel
 from network.numerics.arrays import Bools, Floats
 from network.queries.chart_axes import Axis, Tick, area, around, around_log, polyline
-from network.queries.rating_points import Point
+from network.queries.held_gaugings import Held
+from network.queries.rating_points import UNSTATED_U95_PERCENT, Point
 from network.queries.rating_sheet import Sheet
 
 WIDTH, HEIGHT = 420.0, 320.0
@@ -23,13 +24,13 @@ YEAR_S = 365.25 * 86_400
 
 @dataclass(frozen=True)
 class Dot:
-    """A gauging: used, left out or made later; its U as a line between two places."""
+    """A gauging: used, left out or made later; its U as a line between two heights."""
 
     x: float
     y: float
     kind: str
     title: str
-    whisker: tuple[float, float, float, float] | None = None
+    whisker: tuple[float, float] | None = None
 
 
 @dataclass(frozen=True)
@@ -84,6 +85,21 @@ def zero_of(curve: kernel.Curve) -> float:
     return curve.h0_m if curve.rule == "log" else float(curve.stages_m[0])
 
 
+def in_time(held: Sequence[Held], *, decimal_sign: str = ".") -> Chart | None:
+    """Return the deviations of a station's gaugings, each from the rating of its own time."""
+    if not held:
+        return None
+    u95 = [UNSTATED_U95_PERCENT if h.gauging.u95_percent is None else h.gauging.u95_percent
+           for h in held]  # fmt: skip
+    years = np.array([_year(one.at) for one in held])
+    deviations = np.array([one.deviation_percent for one in held], np.float64)
+    titles = [f"{one.at:%Y-%m-%d}: {one.deviation_percent:+.1f} %" for one in held]
+    return _deviations(
+        years, deviations, np.array(u95), ["used"] * len(held), titles,
+        name=_("Deviations in time"), x_label=_("year"), decimal_sign=decimal_sign,
+    )  # fmt: skip
+
+
 def _relation(sheet: Sheet, before: kernel.Curve | None, *, log: bool, decimal_sign: str) -> Chart:
     low, high = sheet.curve.allowed_m
     zero = zero_of(sheet.curve) if log else 0.0
@@ -116,29 +132,59 @@ def _relation(sheet: Sheet, before: kernel.Curve | None, *, log: bool, decimal_s
 
 
 def _residuals(sheet: Sheet, *, by_time: bool, decimal_sign: str) -> Chart:
-    points, deviations = sheet.points, sheet.deviations_percent
-    known = ~np.isnan(deviations)
-    years = np.array([_year(row.at) for row in points.rows])
-    across = years if by_time else points.stage_m
-    u95 = points.u95_percent
-    ends = np.concatenate((deviations[known] - u95[known], deviations[known] + u95[known], [0.0]))
-    x = _axis(across[known], LEFT, WIDTH - RIGHT, log=False)
-    y = _axis(np.clip(ends, -100, 100), FLAT - BOTTOM, TOP, log=False)
-    places = x.places(across), y.places(deviations)
-    whiskers = (
-        y.places(np.clip(deviations - u95, y.low, y.high)),
-        y.places(np.clip(deviations + u95, y.low, y.high)),
-    )
-    return Chart(
+    known = ~np.isnan(sheet.deviations_percent)
+    points, kinds = sheet.points.part(known), np.array(_kinds(sheet))[known].tolist()
+    deviations = sheet.deviations_percent[known]
+    across = np.array([_year(row.at) for row in points.rows]) if by_time else points.stage_m
+    return _deviations(
+        across,
+        deviations,
+        points.u95_percent,
+        kinds,
+        [_title(row, value) for row, value in zip(points.rows, deviations.tolist(), strict=True)],
         name=_("Deviations in time") if by_time else _("Deviations over stage"),
         x_label=_("year") if by_time else _("stage, m"),
+        decimal_sign=decimal_sign,
+    )
+
+
+def _deviations(
+    across: Floats,
+    deviations: Floats,
+    u95: Floats,
+    kinds: Sequence[str],
+    titles: Sequence[str],
+    *,
+    name: str,
+    x_label: str,
+    decimal_sign: str,
+) -> Chart:
+    """Draw deviations with their U around a line of zero, cut off at ±100 %."""
+    ends = np.clip([deviations - u95, deviations, deviations + u95], -100, 100)
+    x = _axis(across, LEFT, WIDTH - RIGHT, log=False)
+    y = _axis(np.append(ends.ravel(), 0.0), FLAT - BOTTOM, TOP, log=False)
+    places = x.places(across).tolist()
+    low, middle, high = (y.places(row).tolist() for row in ends)
+    return Chart(
+        name=name,
+        x_label=x_label,
         y_label=_("deviation, %"),
         x_ticks=x.ticks(decimal_sign=decimal_sign),
         y_ticks=y.ticks(wanted=5, decimal_sign=decimal_sign),
-        dots=_dots(sheet, known & y.holds(deviations), *places, whiskers=whiskers),
+        dots=[
+            Dot(places[k], middle[k], kinds[k], titles[k], (low[k], high[k]))
+            for k in range(len(places))
+        ],
         zero=float(y.places(np.zeros(1))[0]),
         height=FLAT,
     )
+
+
+def _kinds(sheet: Sheet) -> list[str]:
+    return [
+        "used" if row.is_used else "later" if later else "left"
+        for row, later in zip(sheet.points.rows, sheet.later.tolist(), strict=True)
+    ]
 
 
 def _axis(values: Floats, start: float, end: float, *, log: bool) -> Axis:
@@ -162,25 +208,10 @@ def _band(sheet: Sheet, x: Axis, y: Axis, zero: float) -> str:
     return area([x.places(end) for end in ends], [y.places(head)] * 2)
 
 
-def _dots(
-    sheet: Sheet,
-    shown: Bools,
-    x: Floats,
-    y: Floats,
-    *,
-    whiskers: tuple[Floats, Floats] | None = None,
-) -> list[Dot]:
-    later = sheet.later
+def _dots(sheet: Sheet, shown: Bools, x: Floats, y: Floats) -> list[Dot]:
+    kinds, deviations = _kinds(sheet), sheet.deviations_percent.tolist()
     return [
-        Dot(
-            float(x[k]),
-            float(y[k]),
-            "used" if row.is_used else "later" if later[k] else "left",
-            _title(row, float(sheet.deviations_percent[k])),
-            None
-            if whiskers is None
-            else (float(x[k]), float(whiskers[0][k]), float(x[k]), float(whiskers[1][k])),
-        )
+        Dot(float(x[k]), float(y[k]), kinds[k], _title(row, deviations[k]))
         for k, row in enumerate(sheet.points.rows)
         if shown[k]
     ]

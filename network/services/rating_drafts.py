@@ -3,6 +3,7 @@
 from collections.abc import Sequence
 from dataclasses import dataclass
 from datetime import datetime
+from math import isnan
 
 from django.utils.translation import gettext as _
 
@@ -16,9 +17,10 @@ from network.models import (
     Person,
     Station,
 )
-from network.numerics.curves import Segment, SegmentCurve, joint_gaps
+from network.numerics.curves import Segment, SegmentCurve, TableCurve, joint_gaps
 from network.numerics.sentences import Refused
 from network.queries import curves
+from network.queries.rating_sheet import Sheet
 from network.queries.sentences import said
 from network.services import acts
 from network.services.acts import Refusal, open_act
@@ -70,6 +72,42 @@ class Content:
     gaugings: Sequence[GaugingChoice] = ()
     band: Sequence[tuple[float, float]] = ()
     joints_may_gap: bool = False
+
+
+def content_of(sheet: Sheet, *, joints_may_gap: bool = False) -> Content:
+    """Return what a draft says when it is made from a rating sheet."""
+    curve = sheet.curve
+    if isinstance(curve, SegmentCurve):
+        relation = Relation(segments=curve.segments)
+    else:
+        assert isinstance(curve, TableCurve)
+        rows = zip(curve.stages_m.tolist(), curve.flows_m3s.tolist(), strict=True)
+        relation = Relation(points=list(rows), form=curve.rule, h0_m=curve.h0_m)
+    use = Use(
+        lowest_use_m=curve.lowest_use_m,
+        highest_use_m=curve.highest_use_m,
+        extrapolate_low_m=curve.extrapolate_to_low_m,
+        extrapolate_high_m=curve.extrapolate_to_high_m,
+        gauged_lowest_m=curve.gauged_lowest_m,
+        gauged_highest_m=curve.gauged_highest_m,
+        scatter_percent=sheet.scatter_percent,
+    )
+    deviations = sheet.deviations_percent.tolist()
+    gaugings = [
+        GaugingChoice(
+            gauging=point.gauging,
+            left_out_because=point.left_out_because,
+            deviation_percent=None if isnan(deviation) else deviation,
+        )
+        for point, deviation in zip(sheet.points.rows, deviations, strict=True)
+    ]
+    return Content(
+        relation=relation,
+        use=use,
+        gaugings=gaugings,
+        band=sheet.band.pairs() if sheet.band else (),
+        joints_may_gap=joints_may_gap,
+    )
 
 
 def draft(

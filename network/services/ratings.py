@@ -10,7 +10,15 @@ from network.models import Curve, Person, RatingPeriod, ShiftPoint, ShiftTable, 
 from network.queries import clock, in_force
 from network.services import acts
 from network.services.acts import Refusal, lock_station, open_act
-from network.services.rating_drafts import Content, GaugingChoice, Relation, Use, draft, redraft
+from network.services.rating_drafts import (
+    Content,
+    GaugingChoice,
+    Relation,
+    Use,
+    content_of,
+    draft,
+    redraft,
+)
 
 __all__ = [
     "Content",
@@ -19,10 +27,10 @@ __all__ = [
     "Use",
     "add_shift_table",
     "approve",
+    "content_of",
     "draft",
     "put_in_force",
     "redraft",
-    "replace_period",
     "withdraw_period",
     "withdraw_shift_table",
     "withdraw_version",
@@ -65,10 +73,13 @@ def put_in_force(
     at: datetime,
     reason: str,
     until: datetime | None = None,
+    replaces: bool = False,
 ) -> RatingPeriod:
     """Put an approved version in force from an instant, or say that from then on none is.
 
     With `until` it holds for a season: from then on what was in force before it returns.
+    With `replaces` the period that starts at the same instant is withdrawn in the same act, and
+    with it its shift tables, which were made for another version.
     """
     if curve is not None:
         _refuse_version_for(station, curve)
@@ -80,6 +91,8 @@ def put_in_force(
     signed: dict[str, Any] = {"by": by, "at": at, "reason": reason}
     with open_act(verb, by=by, at=at, reason=reason.strip(), station=station):
         lock_station(station)
+        if replaces:
+            withdraw_period(period=_starting(station, effective_from), **signed)
         if until is not None:
             before = _returning(station, effective_from, until)
             _begin(station, before.curve, until, **signed)
@@ -99,22 +112,6 @@ def withdraw_period(*, period: RatingPeriod, by: Person, at: datetime, reason: s
             acts.withdraw(table, by=by, at=at, reason=reason)
         acts.withdraw(row, by=by, at=at, reason=reason)
         acts.raise_record_version(station)
-
-
-def replace_period(
-    *, period: RatingPeriod, curve: Curve | None, by: Person, at: datetime, reason: str
-) -> RatingPeriod:
-    """Withdraw a period and put another version in force from the same instant, as one act.
-
-    Its shift tables were made for the version that is withdrawn, and go with it.
-    """
-    verb = _("replaced a period of a rating")
-    signed: dict[str, Any] = {"by": by, "at": at, "reason": reason}
-    with open_act(verb, by=by, at=at, reason=reason.strip(), station=period.station):
-        withdraw_period(period=period, **signed)
-        return put_in_force(
-            station=period.station, curve=curve, effective_from=period.effective_from, **signed
-        )
 
 
 def add_shift_table(
@@ -185,6 +182,17 @@ def _begin(
     )
     row.full_clean()
     row.save()
+    return row
+
+
+def _starting(station: Station, effective_from: datetime) -> RatingPeriod:
+    """Return the standing period that starts at an instant; refuse where none does."""
+    rows = RatingPeriod.objects.standing().filter(station=station)
+    row = rows.filter(effective_from=effective_from).first()
+    if row is None:
+        raise Refusal(
+            _("No version starts at that instant; there is nothing to replace."), field="replaces"
+        )
     return row
 
 
