@@ -1,7 +1,7 @@
 """A visit as written on the form: while it is typed, from its stored rows, or newly started."""
 
 from dataclasses import dataclass
-from datetime import datetime
+from datetime import datetime, timedelta
 
 from network.models import (
     Instrument,
@@ -17,6 +17,8 @@ from network.models import (
     VisitReading,
     WorkLeft,
 )
+
+ONE_DAY, HALF_DAY = timedelta(days=1), timedelta(hours=12)
 
 
 @dataclass(frozen=True, kw_only=True)
@@ -115,6 +117,15 @@ def sheet_of(visit: Visit) -> VisitSheet:
         spin_tests=tuple(_row(SpinRow, row) for row in spins),
         work_left=tuple(_row(WorkRow, row) for row in WorkLeft.objects.filter(visit=visit)),
     )
+
+
+def across_midnight(instant: datetime, *, arrived_at: datetime) -> datetime:
+    """Return the instant meant by a time typed on the day of arrival: after midnight, the next day.
+
+    Only where that still makes a visit of less than half a day; else the time stays as typed.
+    """
+    later = instant + ONE_DAY
+    return later if instant < arrived_at and later - arrived_at < HALF_DAY else instant
 
 
 def columns_of(row: object) -> dict[str, object]:

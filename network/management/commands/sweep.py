@@ -7,13 +7,15 @@ from django.core.management.base import BaseCommand
 from django.utils import timezone
 from django.utils.translation import gettext as _
 
-from network.services import originals
+from network.services import originals, photographs
+
+KINDS = (originals, photographs)
 
 
 class Command(BaseCommand):
-    """Remove what a crash, or an upload nobody confirmed, left in the folder of logger files."""
+    """Remove what a crash, or an upload nobody confirmed, left among the kept files."""
 
-    help = "Remove logger files that no import names and that are older than a day."
+    help = "Remove logger files and photographs that no row names, older than a day."
 
     def add_arguments(self, parser: ArgumentParser) -> None:
         """Offer to look only."""
@@ -21,8 +23,9 @@ class Command(BaseCommand):
 
     def handle(self, *args: Any, **options: Any) -> None:
         """List or remove the files, one a line."""
-        act = originals.unnamed_files if options["dry_run"] else originals.sweep
-        found = act(at=timezone.now())
+        name = "unnamed_files" if options["dry_run"] else "sweep"
+        now = timezone.now()
+        found = [path for kind in KINDS for path in getattr(kind, name)(at=now)]
         for path in found:
             self.stdout.write(path.name)
         said = _("%(count)d files to remove.") if options["dry_run"] else _("%(count)d removed.")
