@@ -1,0 +1,68 @@
+"""Ratios of times measured side by side in one run, and what each is to hold."""
+
+import statistics
+import time
+from collections.abc import Callable, Mapping
+from dataclasses import dataclass
+from pathlib import Path
+
+Work = Callable[[], object]
+
+
+@dataclass(frozen=True)
+class Ratio:
+    """A measured ratio and its bound: at most `hold`, or at least where `at_least` says so."""
+
+    what: str
+    value: float
+    hold: float
+    at_least: bool = False
+    unit: str = "×"
+    remark: str = ""
+
+    @property
+    def holds(self) -> bool:
+        """Whether the ratio is within its bound."""
+        return self.value >= self.hold if self.at_least else self.value <= self.hold
+
+    def __str__(self) -> str:
+        sign = "≥" if self.at_least else "≤"
+        told = "" if self.holds else "   OUT OF HOLD"
+        beside = f"   {self.remark}" if self.remark else ""
+        return (
+            f"{self.what:<62}{self.value:8.2f} {self.unit:<3}"
+            f" (hold {sign} {self.hold:g}){told}{beside}"
+        )
+
+
+def medians(
+    works: Mapping[str, Work],
+    *,
+    runs: int,
+    clock: Callable[[], float] = time.perf_counter,
+    prepare: Work = lambda: None,
+) -> dict[str, float]:
+    """Return the median seconds of each work, the works taking turns; one round goes before.
+
+    prepare is done before each round and not measured.
+    """
+    taken: dict[str, list[float]] = {name: [] for name in works}
+    for turn in range(runs + 1):
+        prepare()
+        for name, work in works.items():
+            begun = clock()
+            work()
+            if turn:
+                taken[name].append(clock() - begun)
+    return {name: statistics.median(seconds) for name, seconds in taken.items()}
+
+
+def milliseconds(**seconds: float) -> str:
+    """Write times behind a ratio."""
+    return ", ".join(f"{name} {1000 * each:.1f} ms" for name, each in seconds.items())
+
+
+def resident_mb() -> float:
+    """Return the memory this process holds now, in MB (Linux)."""
+    pages = int(Path("/proc/self/statm").read_text().split()[1])
+    return pages * 4096 / 2**20

@@ -1,0 +1,48 @@
+"""Print the ratios of speed that this program means to hold, and write them to a file."""
+
+from itertools import chain
+from pathlib import Path
+from typing import Any
+
+from django.conf import settings
+from django.core.management.base import BaseCommand, CommandError, CommandParser
+from django.db import connection
+from django.db.utils import Error as DatabaseError
+
+from reports import services
+from reports.management.benchmark import place, records
+
+
+class Command(BaseCommand):
+    """Measure in a throw-away database of the engine that DATABASE_URL names."""
+
+    help = "Measure ratios side by side, medians of interleaved runs; print them and write a file."
+    requires_system_checks: list[str] = ["printing"]
+
+    def add_arguments(self, parser: CommandParser) -> None:
+        """Take how long to measure and where to write."""
+        parser.add_argument("--quick", action="store_true", help="fewer years and runs: a look")
+        parser.add_argument("--output", type=Path, help="file; benchmark.txt in the data folder")
+
+    def handle(self, *args: Any, quick: bool, output: Path | None, **options: Any) -> None:
+        """Measure; end well whatever the ratios are, those out of hold marked."""
+        lines = [f"{connection.vendor}, {'quick look' if quick else 'medians of 7 runs'}"]
+        self.stdout.write(lines[0])
+        runs, years, yearbooks = (3, 3, 12) if quick else (7, 30, 50)
+        try:
+            printing = services.printer("management.benchmark.printing")
+            with place.throw_away() as folder:
+                measured = chain(
+                    records.ratios(folder, years=years, runs=runs),
+                    printing.ratios(folder, runs=2 if quick else runs, yearbooks=yearbooks),
+                )
+                for ratio in measured:
+                    lines.append(str(ratio))
+                    self.stdout.write(lines[-1])
+                    self.stdout.flush()
+        except (DatabaseError, services.Refusal) as error:
+            raise CommandError(str(error)) from error
+        path = output or Path(settings.DATA_DIR) / "benchmark.txt"
+        path.parent.mkdir(parents=True, exist_ok=True)
+        path.write_text("\n".join(lines) + "\n", encoding="utf-8")
+        self.stdout.write(f"Written to {path}.")
