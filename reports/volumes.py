@@ -59,9 +59,7 @@ def contents_of(editions: Sequence[Edition]) -> list[Part]:
     return parts
 
 
-def write(
-    parts: Sequence[Part], out: Any, *, title: str, agency: Agency, bound_on: date
-) -> None:
+def write(parts: Sequence[Part], out: Any, *, title: str, agency: Agency, bound_on: date) -> None:
     """Write the volume into an open file; the same parts, title and day give the same bytes."""
     front = _front(parts, title=title, agency=agency, bound_on=bound_on)
     with pikepdf.open(BytesIO(front)) as volume:

@@ -117,12 +117,12 @@ def _records_before(model: type[models.Model], records: Sequence[Any]) -> dict[i
 
 def _row_change(model: type[models.Model], *, record: Any, old: Any) -> RowChange:
     names = [f.name for f in record.tracked_fields if f.name not in HOUSEKEEPING]
+    attributes = [(name, model._meta.get_field(name).attname) for name in names]
     if record.history_type == CHANGED and old is not None:
-        delta = record.diff_against(old, included_fields=names)
-        changed = [(change.field, change.old, change.new) for change in delta.changes]
+        both = [(name, getattr(old, at), getattr(record, at)) for name, at in attributes]
+        changed = [item for item in both if item[1] != item[2]]
     elif record.history_type == ADDED:
-        attributes = [(name, model._meta.get_field(name).attname) for name in names]
-        changed = [(name, None, getattr(record, attribute)) for name, attribute in attributes]
+        changed = [(name, None, getattr(record, at)) for name, at in attributes]
         changed = [item for item in changed if item[2] not in (None, "", False)]
     else:
         changed = []

@@ -2,7 +2,7 @@
 
 from calendar import isleap
 from collections.abc import Sequence
-from datetime import UTC, datetime, timedelta
+from datetime import UTC, date, datetime, timedelta
 
 import numpy as np
 
@@ -123,11 +123,18 @@ def _year(data: YearData, figures: KernelYear) -> y.YearFigures:
         mean=number(figures.mean),
         highest_day=Event(number(figures.maximum, _doubt(figures)), figures.maximum_day),
         lowest_day=Event(number(figures.minimum), figures.minimum_day),
-        lowest_seven_days=Event(number(figures.lowest_7_day_mean), figures.lowest_7_day_last_day),
+        lowest_seven_days=_seven_days(
+            data, figures.lowest_7_day_mean, figures.lowest_7_day_last_day
+        ),
         volume_hm3=_volume(data, figures),
         runoff_mm=_runoff(data, figures),
         specific_ls_km2=data.printer.flow(specific),
     )
+
+
+def _seven_days(data: YearData, mean: float | None, last_day: date | None) -> Event:
+    """Print the lowest mean flow of seven days; of stage nobody asks for it."""
+    return NO_EVENT if data.stage_only else Event(data.printer.flow(mean), last_day)
 
 
 def _earlier_year(data: YearData) -> y.YearFigures | None:
@@ -146,7 +153,7 @@ def _earlier_year(data: YearData) -> y.YearFigures | None:
         mean=number(figures.mean),
         highest_day=Event(number(figures.maximum), figures.maximum_day),
         lowest_day=Event(number(figures.minimum), figures.minimum_day),
-        lowest_seven_days=Event(number(seven), seven_day),
+        lowest_seven_days=_seven_days(data, seven, seven_day),
         volume_hm3=_mean(data, [f.volume_hm3 for f in complete]),
         runoff_mm=_mean(data, [_runoff_value(data, f) for f in complete]),
         specific_ls_km2=_mean(data, [_specific_value(data, f) for f in complete]),

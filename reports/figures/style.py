@@ -122,7 +122,8 @@ def decades(axes: Axes, which: str, *, lowest: float, highest: float) -> None:
     One label a decade is kept where more than three decades are covered.
     """
     low, high = 10 ** np.floor(np.log10(lowest)), highest * 1.25
-    low = max(step for step in (low, 2 * low, 5 * low) if step <= lowest)
+    # A power of ten may lie a hair above a lowest that equals it.
+    low = max((step for step in (low, 2 * low, 5 * low) if step <= lowest), default=low)
     wide = np.log10(high / low) > 3
     exponents = range(int(np.floor(np.log10(low))), int(np.floor(np.log10(high))) + 1)
     ticks = [d * 10.0**e for e in exponents for d in ((1,) if wide else (1, 2, 5))]
