@@ -86,11 +86,11 @@ class FitForm(forms.Form):
     segments = forms.TypedChoiceField(
         label=_("segments"), choices=[(n, n) for n in (1, 2, 3)], coerce=int, initial=1
     )
-    zero_1_m = level(_("h₀ of segment 1, m"), help_text=_("Left empty, it is searched."))
-    break_1_m = level(_("segment 2 from stage, m"), help_text=_("Left empty, it is searched."))
-    zero_2_m = level(_("h₀ of segment 2, m"))
-    break_2_m = level(_("segment 3 from stage, m"))
-    zero_3_m = level(_("h₀ of segment 3, m"))
+    zero_1_m = level(_("segment 1: h₀, m"), help_text=_("Left empty, it is searched."))
+    break_1_m = level(_("segment 2: from stage, m"), help_text=_("Left empty, it is searched."))
+    zero_2_m = level(_("segment 2: h₀, m"))
+    break_2_m = level(_("segment 3: from stage, m"))
+    zero_3_m = level(_("segment 3: h₀, m"))
     joints_may_gap = forms.BooleanField(
         label=_("the segments need not meet within 0.5 %"), required=False
     )

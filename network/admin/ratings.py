@@ -117,6 +117,7 @@ class CurveAdmin(RatingSheetPages, ReadOnlyAdmin):
         """Show the stored version as a sheet."""
         row = options.get("obj")
         if row is not None:
+            context["subtitle"] = f"{row.station} · {row.number}"
             try:
                 context.update(shown(rating_sheet.stored(row), row.station, leave_out=row))
             except ValueError as error:

@@ -9,6 +9,7 @@ import numpy as np
 from network.numerics.arrays import Bools, Floats
 
 STEPS = (1, 2, 5, 10)
+LEAST_YEARS = 2.5  # a shorter axis of time is marked by months
 
 
 @dataclass(frozen=True)
@@ -53,6 +54,19 @@ class Axis:
             for place, (value, shown) in zip(places, values, strict=True)
         ]
 
+    def year_ticks(self) -> list[Tick]:
+        """Return ticks of an axis of years and their fractions: years, or months of a short one."""
+        if self.high - self.low >= LEAST_YEARS:
+            whole = [
+                (value, f"{value:g}") for value, _shown in self._plain_ticks(6) if value % 1 == 0
+            ]
+        else:
+            months = range(ceil(self.low * 12), floor(self.high * 12) + 1)
+            step = ceil(len(months) / 6)
+            whole = [(m / 12, f"{m // 12}-{m % 12 + 1:02}") for m in months[::step]]
+        places = self.places(np.array([value for value, _text in whole], np.float64))
+        return [Tick(float(at), text) for at, (_value, text) in zip(places, whole, strict=True)]
+
     def _plain_ticks(self, wanted: int) -> list[tuple[float, bool]]:
         raw = (self.high - self.low) / wanted
         power = 10.0 ** floor(log10(raw))
@@ -62,8 +76,9 @@ class Axis:
 
     def _log_ticks(self) -> list[tuple[float, bool]]:
         first, last = floor(log10(self.low)), ceil(log10(self.high))
-        shown = (1,) if last - first > 4 else (1, 2, 5)
-        every = [(k * 10.0**p, k in shown) for p in range(first, last + 1) for k in range(1, 10)]
+        is_long = last - first > 3
+        shown, drawn = ((1,), (1, 2, 5)) if is_long else ((1, 2, 5), range(1, 10))
+        every = [(k * 10.0**p, k in shown) for p in range(first, last + 1) for k in drawn]
         return [tick for tick in every if self.low * 0.999 <= tick[0] <= self.high * 1.001]
 
 

@@ -19,6 +19,7 @@ LEFT, RIGHT, TOP, BOTTOM = 48.0, 10.0, 10.0, 40.0
 FLAT = 200.0  # height of a chart of residuals
 CURVE_POINTS = 160
 LOG_SPAN = 1e4  # a log axis reaches no further below its highest figure
+LEAST_HEAD = 0.01  # of the highest head: where a curve on log axes begins
 YEAR_S = 365.25 * 86_400
 
 
@@ -96,7 +97,7 @@ def in_time(held: Sequence[Held], *, decimal_sign: str = ".") -> Chart | None:
     titles = [f"{one.at:%Y-%m-%d}: {one.deviation_percent:+.1f} %" for one in held]
     return _deviations(
         years, deviations, np.array(u95), ["used"] * len(held), titles,
-        name=_("Deviations in time"), x_label=_("year"), decimal_sign=decimal_sign,
+        by_time=True, decimal_sign=decimal_sign,
     )  # fmt: skip
 
 
@@ -108,7 +109,7 @@ def _relation(sheet: Sheet, before: kernel.Curve | None, *, log: bool, decimal_s
     if log:
         known &= (points.flow_m3s > 0) & (points.stage_m > zero)
     stage_m, flow_m3s = points.stage_m[known], points.flow_m3s[known]
-    start = max(low, zero + (high - zero) * 1e-3) if log else low
+    start = max(low, zero + (high - zero) * LEAST_HEAD) if log else low
     grid = (
         zero + np.geomspace(start - zero, high - zero, CURVE_POINTS)
         if log
@@ -142,8 +143,7 @@ def _residuals(sheet: Sheet, *, by_time: bool, decimal_sign: str) -> Chart:
         points.u95_percent,
         kinds,
         [_title(row, value) for row, value in zip(points.rows, deviations.tolist(), strict=True)],
-        name=_("Deviations in time") if by_time else _("Deviations over stage"),
-        x_label=_("year") if by_time else _("stage, m"),
+        by_time=by_time,
         decimal_sign=decimal_sign,
     )
 
@@ -155,8 +155,7 @@ def _deviations(
     kinds: Sequence[str],
     titles: Sequence[str],
     *,
-    name: str,
-    x_label: str,
+    by_time: bool,
     decimal_sign: str,
 ) -> Chart:
     """Draw deviations with their U around a line of zero, cut off at ±100 %."""
@@ -166,10 +165,10 @@ def _deviations(
     places = x.places(across).tolist()
     low, middle, high = (y.places(row).tolist() for row in ends)
     return Chart(
-        name=name,
-        x_label=x_label,
+        name=_("Deviations in time") if by_time else _("Deviations over stage"),
+        x_label="" if by_time else _("stage, m"),
         y_label=_("deviation, %"),
-        x_ticks=x.ticks(decimal_sign=decimal_sign),
+        x_ticks=x.year_ticks() if by_time else x.ticks(decimal_sign=decimal_sign),
         y_ticks=y.ticks(wanted=5, decimal_sign=decimal_sign),
         dots=[
             Dot(places[k], middle[k], kinds[k], titles[k], (low[k], high[k]))

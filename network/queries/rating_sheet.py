@@ -61,6 +61,16 @@ class SegmentLine:
     gaugings: int | None = None
     h0_at_limit: bool = False
 
+    @property
+    def taken_off_m(self) -> float | None:
+        """h₀ where it is taken off the stage; None where it lies below the station zero."""
+        return self.h0_m if self.h0_m >= 0 else None
+
+    @property
+    def added_m(self) -> float:
+        """What is added to the stage where h₀ lies below the station zero."""
+        return -self.h0_m
+
 
 @dataclass(frozen=True, eq=False)
 class Sheet:
