@@ -11,7 +11,7 @@ from network.numerics.marks import Mark
 from network.numerics.rating import Rated
 from network.queries import clock, curves, flows, in_force
 from network.queries.flows import StationDays
-from network.queries.station_inputs import load
+from network.queries.station_inputs import ONE_DAY, load
 
 STATED = Mark.ESTIMATED | Mark.TYPED
 
@@ -43,7 +43,7 @@ def daily_u95(station: Station, days: StationDays) -> Floats:
 def _at_readings(station: Station, record: Rated, first: date, last: date) -> Floats:
     """Return U₉₅ of the flow at each reading, NaN under a rating that states no band."""
     own = clock.agency()
-    start, end = clock.day_start(first, of=own), clock.day_start(last, of=own)
+    start, end = clock.day_start(first, of=own), clock.day_start(last + ONE_DAY, of=own)
     rows = RatingPeriod.objects.filter(station=station).select_related("curve")
     rows = rows.prefetch_related("curve__segments", "curve__points", "curve__band")
     u95 = np.full(len(record.times_s), np.nan)
