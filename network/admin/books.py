@@ -7,6 +7,7 @@ from network.admin import (
     gauges,
     gaugings,
     instruments,
+    levels,
     mapping_profiles,
     people,
     plans,
@@ -16,6 +17,7 @@ from network.admin import (
     safety,
     statements,
     stations,
+    visits,
 )
 
 __all__ = [
@@ -25,6 +27,7 @@ __all__ = [
     "gauges",
     "gaugings",
     "instruments",
+    "levels",
     "mapping_profiles",
     "people",
     "plans",
@@ -34,4 +37,5 @@ __all__ = [
     "safety",
     "statements",
     "stations",
+    "visits",
 ]
