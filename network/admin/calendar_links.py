@@ -13,7 +13,6 @@ from django.urls import URLPattern, path, reverse
 from django.utils import timezone
 from django.utils.translation import gettext as _t
 from django.utils.translation import gettext_lazy as _
-from django.views.decorators.cache import never_cache
 
 from network.models import FeedLink, Office
 from network.queries import feeds
@@ -47,11 +46,11 @@ def urls(site: AdminSite) -> list[URLPattern]:
     ]
 
 
-@never_cache
 def links(site: AdminSite, request: HttpRequest) -> HttpResponse:
     """Show one's own links; on POST make one and show its address this once."""
     may_office = request.user.has_perm(MAY_MAKE)
-    form = LinkForm(request.POST or None) if may_office else None
+    typed = request.POST if request.method == "POST" else None
+    form = LinkForm(typed) if may_office else None
     made = ""
     if request.method == "POST" and (form is None or form.is_valid()):
         office = form.cleaned_data["office"] if form else None

@@ -50,6 +50,7 @@ class _Making:
     chance: random.Random
     by: Person
     at: datetime
+    first: int
 
     def ago(self, days: float) -> datetime:
         """Return the instant some days before the present."""
@@ -61,10 +62,15 @@ class _Making:
 
 
 @transaction.atomic
-def make(*, size: Size, by: Person, at: datetime, seed: int = 1) -> None:
-    """Fill an empty database with a network; about every seventh item of work is due."""
-    making = _Making(size, random.Random(seed), by, at.astimezone(UTC))
-    offices = _keep(Office, (Office(name=f"Office {n:02d}") for n in range(size.offices)))
+def make(*, size: Size, by: Person, at: datetime, seed: int = 1, first: int = 0) -> None:
+    """Fill a database with a network; about every seventh item of work is due.
+
+    first: number of the first station and instrument, for a network that grows.
+    """
+    making = _Making(size, random.Random(seed), by, at.astimezone(UTC), first)
+    offices = _keep(
+        Office, (Office(name=f"Office {first:04d}-{n:02d}") for n in range(size.offices))
+    )
     stations = _stations(making, offices)
     _instruments(making, offices)
     _visits(making, stations)
@@ -82,7 +88,7 @@ def _stations(making: _Making, offices: list[Office]) -> list[Station]:
         Station,
         (
             Station(
-                code=f"G-{n:04d}",
+                code=f"G-{making.first + n:04d}",
                 name=f"Ford {n}",
                 river=f"River {n % 97}",
                 latitude_deg=47 + making.chance.random(),
@@ -103,7 +109,12 @@ def _instruments(making: _Making, offices: list[Office]) -> None:
     count, kinds = making.size.instruments, Instrument.Kind
 
     def one(n: int, kind: str, **more: Any) -> Instrument:
-        return Instrument(kind=kind, serial=f"{n:05d}", office=offices[n % len(offices)], **more)
+        return Instrument(
+            kind=kind,
+            serial=f"{making.first:04d}-{n:05d}",
+            office=offices[n % len(offices)],
+            **more,
+        )
 
     bodies = _keep(Instrument, (one(n, kinds.METER_BODY) for n in range(count // 6)))
     rotors = _keep(Instrument, (one(n, kinds.METER_ROTOR) for n in range(count // 6)))
