@@ -18,6 +18,7 @@ from network.admin import (
     statements,
     stations,
     visits,
+    zeros,
 )
 
 __all__ = [
@@ -38,4 +39,5 @@ __all__ = [
     "statements",
     "stations",
     "visits",
+    "zeros",
 ]

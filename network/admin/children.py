@@ -4,11 +4,21 @@ from collections.abc import Sequence
 from typing import Any
 
 from django.contrib import admin
-from django.forms import BaseInlineFormSet
+from django.forms import BaseInlineFormSet, BaseModelForm
 from django.http import HttpRequest
 
 from network.admin.fields import FieldParts
 from network.services.acts import Refusal
+
+
+def kept_forms(formset: BaseInlineFormSet) -> list[BaseModelForm]:
+    """Return the forms of a cleaned formset that are filled and not marked for removal."""
+    return [
+        form
+        for form in formset.forms
+        if (form.has_changed() or form.instance.pk)
+        and not (formset.can_delete and formset._should_delete_form(form))
+    ]
 
 
 def kept_rows(formset: BaseInlineFormSet) -> list[dict[str, Any]]:
@@ -20,20 +30,24 @@ def kept_rows(formset: BaseInlineFormSet) -> list[dict[str, Any]]:
     left_out = {"DELETE", formset.fk.name}
     return [
         {name: value for name, value in form.cleaned_data.items() if name not in left_out}
-        for form in formset.forms
-        if (form.has_changed() or form.instance.pk)
-        and not (formset.can_delete and formset._should_delete_form(form))
+        for form in kept_forms(formset)
     ]
 
 
 def place(refusal: Refusal, formsets: Sequence[BaseInlineFormSet]) -> bool:
-    """Put a refusal at the child row and field it names; tell whether there is one."""
+    """Put a refusal at the child row and field it names; tell whether there is one.
+
+    A service counts the rows it was handed: empty lines of the form are none of them.
+    """
     for formset in formsets:
-        for form in formset.forms:
-            name = refusal.field.removeprefix(f"{form.prefix}-")
-            if name != refusal.field and name in form.fields:
-                form.full_clean()  # so that the sentence is added to what else is wrong
-                form.add_error(name, refusal.sentence)
+        if not refusal.field.startswith(f"{formset.prefix}-"):
+            continue
+        formset.is_valid()  # so that the sentence is added to what else is wrong
+        for number, form in enumerate(kept_forms(formset)):
+            row = f"{formset.prefix}-{number}"
+            if refusal.field == row or refusal.field.startswith(f"{row}-"):
+                name = refusal.field.removeprefix(row).removeprefix("-")
+                form.add_error(name if name in form.fields else None, refusal.sentence)
                 return True
     return False
 

@@ -9,7 +9,7 @@ from django.http import HttpRequest, HttpResponse
 from django.template.loader import render_to_string
 from django.urls import URLPattern, path
 
-from network.admin.children import kept_rows
+from network.admin.children import kept_forms, kept_rows
 from network.admin.forms import StaffForm
 
 COMPUTE = "_compute"
@@ -17,11 +17,15 @@ COMPUTE = "_compute"
 
 @dataclass(frozen=True)
 class Typed:
-    """What of a form can be read so far: cleaned fields, and children by prefix."""
+    """What of a form can be read so far: cleaned fields, and children by prefix.
+
+    places: for each child of a prefix the prefix of its own fields, as "readings-2".
+    """
 
     row: Any  # as stored, None when new
     values: Mapping[str, Any]
     children: Mapping[str, list[dict[str, Any]]]
+    places: Mapping[str, list[str]]
 
 
 class LiveForm(StaffForm):
@@ -95,4 +99,5 @@ def typed(row: Any, form: Any, formsets: Sequence[Any]) -> Typed:
     for formset in formsets:
         formset.is_valid()
     children = {formset.prefix: kept_rows(formset) for formset in formsets}
-    return Typed(row, getattr(form, "cleaned_data", {}), children)
+    places = {formset.prefix: [form.prefix for form in kept_forms(formset)] for formset in formsets}
+    return Typed(row, getattr(form, "cleaned_data", {}), children, places)

@@ -1,6 +1,7 @@
 """The form of a visit: what it is about, work earlier visits left, photographs."""
 
 from collections.abc import Mapping, Sequence
+from datetime import datetime
 from typing import Any, ClassVar
 
 from django import forms
@@ -45,7 +46,9 @@ class PhotographsField(forms.FileField):
         """Keep each picture under its hash; refuse what is none."""
         uploads = data if isinstance(data, list | tuple) else [data] if data else []
         if len(uploads) > MOST_PHOTOGRAPHS:
-            raise ValidationError(_("At most %(n)d photographs at a time."), params={"n": 20})
+            raise ValidationError(
+                _("At most %(n)d photographs at a time."), params={"n": MOST_PHOTOGRAPHS}
+            )
         try:
             return [_kept(upload) for upload in uploads if upload]
         except Refusal as refusal:
@@ -121,51 +124,52 @@ def instruments() -> Any:
     )
 
 
-def sheet_of(
-    values: Mapping[str, Any], children: Mapping[str, Sequence[Mapping[str, Any]]]
-) -> VisitSheet | None:
-    """Put a sheet together from what is cleaned; None without station or arrival.
+# What makes a child a row; while it is typed, lines that lack it are left out.
+NEEDED: dict[str, tuple[type, tuple[str, ...]]] = {
+    "readings": (ReadingRow, ("read_at",)),
+    "recorder_checks": (CheckRow, ("checked_at", "series")),
+    "spin_tests": (SpinRow, ("pair", "seconds")),
+    "work_left": (WorkRow, ("text",)),
+}
 
-    Rows that lack what makes them a row are left out: the form itself asks for it.
-    """
+
+def sheet_of(values: Mapping[str, Any], children: Mapping[str, Sequence[Any]]) -> VisitSheet | None:
+    """Put a sheet together from what is cleaned; None without station or arrival."""
     station, arrived_at = values.get("station"), values.get("arrived_at")
     if station is None or arrived_at is None:
         return None
-    columns = {name: values[name] for name in COLUMNS if name in values}
-    if columns.get("departed_at"):
-        columns["departed_at"] = across_midnight(columns["departed_at"], arrived_at=arrived_at)
+    columns = _on_their_day({name: values[name] for name in COLUMNS if name in values}, arrived_at)
+    rows = {
+        name: tuple(
+            _row(kind, _on_their_day(row, arrived_at))
+            for row in children.get(name, ())
+            if is_row(name, row)
+        )
+        for name, (kind, _needed) in NEEDED.items()
+    }
+    party, used = values.get("party") or (), values.get("instruments") or ()
     return VisitSheet(
-        station=station,
-        **columns,
-        party=tuple(values.get("party") or ()),
-        instruments=tuple(values.get("instruments") or ()),
-        readings=tuple(
-            _row(ReadingRow, row, read_at=across_midnight(row["read_at"], arrived_at=arrived_at))
-            for row in children.get("readings", ())
-            if row.get("read_at") and (row.get("plate") or row.get("other_gauge"))
-        ),
-        recorder_checks=tuple(
-            _row(
-                CheckRow,
-                row,
-                checked_at=across_midnight(row["checked_at"], arrived_at=arrived_at),
-            )
-            for row in children.get("recorder_checks", ())
-            if row.get("checked_at") and row.get("series")
-        ),
-        spin_tests=tuple(
-            _row(SpinRow, row)
-            for row in children.get("spin_tests", ())
-            if row.get("pair") and row.get("seconds") is not None
-        ),
-        work_left=tuple(
-            _row(WorkRow, row) for row in children.get("work_left", ()) if row.get("text")
-        ),
+        station=station, party=tuple(party), instruments=tuple(used), **columns, **rows
     )
 
 
-def _row(kind: Any, cleaned: Mapping[str, Any], **changes: Any) -> Any:
+def is_row(name: str, cleaned: Mapping[str, Any]) -> bool:
+    """Tell whether a child has what makes it a row."""
+    gauged = name != "readings" or cleaned.get("plate") or cleaned.get("other_gauge")
+    return bool(gauged) and all(cleaned.get(field) not in (None, "") for field in NEEDED[name][1])
+
+
+def _on_their_day(cleaned: Mapping[str, Any], arrived_at: datetime) -> dict[str, Any]:
+    """Roll times typed on the day of arrival past midnight, where they are meant so."""
+    return {
+        name: across_midnight(value, arrived_at=arrived_at)
+        if isinstance(value, datetime)
+        else value
+        for name, value in cleaned.items()
+    }
+
+
+def _row(kind: Any, cleaned: Mapping[str, Any]) -> Any:
     stored = cleaned.get("id")
     names = [name for name in kind.__dataclass_fields__ if name in cleaned]
-    values = {name: cleaned[name] for name in names} | changes
-    return kind(**values, key=stored.pk if stored else None)
+    return kind(**{name: cleaned[name] for name in names}, key=stored.pk if stored else None)

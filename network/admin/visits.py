@@ -2,9 +2,11 @@
 
 from typing import Any
 
+from django import forms
 from django.contrib import admin
 from django.db import models
 from django.http import HttpRequest, HttpResponse
+from django.template.loader import render_to_string
 from django.utils import timezone
 from django.utils.translation import gettext_lazy as _
 
@@ -12,15 +14,22 @@ from network.admin.acting import Filled, ServedAdmin
 from network.admin.at_station import AtStation
 from network.admin.live import LivePages, Typed
 from network.admin.verbs import NoReasonForm, Verb
+from network.admin.visit_answer import shown_answer
 from network.admin.visit_children import Readings, RecorderChecks, SpinTests, WorkLeftRows
-from network.admin.visit_form import VisitForm, earlier_work, sheet_of
+from network.admin.visit_form import VisitForm, earlier_work, is_row, sheet_of
 from network.models import Visit
+from network.queries import recorder_checks
 from network.queries import visits as answers
-from network.queries.visit_sheet import VisitSheet
 from network.queries.visit_sheet import sheet_of as stored_sheet
 from network.services import photographs, visits
+from network.services.recorder_checks import propose_from_visit
 
 MAY_CHANGE = "network.change_visit"
+
+
+def _proposals(request: HttpRequest, row: Any, _form: forms.Form) -> str:
+    context = {"proposals": recorder_checks.open_proposals_of_visit(row)}
+    return render_to_string("admin/network/visit/_proposals.html", context, request)
 
 
 @admin.register(Visit)
@@ -65,6 +74,15 @@ class VisitAdmin(AtStation, LivePages, ServedAdmin):
             permission=MAY_CHANGE,
             applies=lambda row: row.state == Visit.State.CHECKED,
             run=lambda row, **who: visits.reopen_visit(visit=row, **who),
+        ),
+        Verb(
+            name="propose",
+            label=_("propose corrections"),
+            permission="network.add_correction",
+            form=NoReasonForm,
+            applies=lambda row: bool(recorder_checks.open_proposals_of_visit(row)),
+            run=lambda row, **who: propose_from_visit(visit=row, **who),
+            preview=_proposals,
         ),
     )
 
@@ -132,19 +150,33 @@ class VisitAdmin(AtStation, LivePages, ServedAdmin):
         return visit
 
     def answer(self, request: HttpRequest, typed: Typed) -> dict[str, Any]:
-        """Give stages and findings of what is typed so far."""
-        return _answer(sheet_of(typed.values, typed.children))
+        """Give stages and findings of what is typed so far, each at its field."""
+        sheet = sheet_of(typed.values, typed.children)
+        if sheet is None:
+            return {}
+        places = {
+            name: [
+                place
+                for place, row in zip(typed.places.get(name, ()), typed.children[name], strict=True)
+                if is_row(name, row)
+            ]
+            for name in typed.children
+        }
+        return shown_answer(sheet, at=timezone.now(), places=places)
 
     def answer_to_stored(self, request: HttpRequest, row: Any) -> dict[str, Any]:
         """Give stages and findings of a stored visit."""
-        return _answer(stored_sheet(row))
+        return shown_answer(stored_sheet(row), at=timezone.now())
 
     def render_change_form(
         self, request: HttpRequest, context: dict[str, Any], **options: Any
     ) -> HttpResponse:
-        """Add the photographs, and what earlier visits left."""
+        """Add the photographs, and the corrections the visit's recorder checks propose."""
         row = options.get("obj")
-        context["photographs"] = row.photographs.all() if row is not None and row.pk else ()
+        if row is not None and row.pk:
+            context["photographs"] = row.photographs.all()
+            context["proposals"] = recorder_checks.open_proposals_of_visit(row)
+            context["corrections"] = recorder_checks.corrections_of_visit(row)
         return super().render_change_form(request, context, **options)
 
     def _may_write(self, request: HttpRequest, obj: Any) -> bool:
@@ -157,12 +189,3 @@ class VisitAdmin(AtStation, LivePages, ServedAdmin):
         if not hasattr(request, "opened_at"):
             request.opened_at = timezone.now().replace(second=0, microsecond=0)  # type: ignore[attr-defined]
         return request.opened_at  # type: ignore[attr-defined]
-
-
-def _answer(sheet: VisitSheet | None) -> dict[str, Any]:
-    if sheet is None:
-        return {}
-    return {
-        "stages": answers.stages(sheet),
-        "findings": answers.findings(sheet, at=timezone.now()),
-    }

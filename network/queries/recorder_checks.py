@@ -2,9 +2,9 @@
 
 from collections.abc import Iterable, Sequence
 from dataclasses import dataclass
-from datetime import timedelta
+from datetime import UTC, datetime, timedelta
 
-from network.models import Correction, RecorderCheck, Series, VisitReading
+from network.models import Correction, RecorderCheck, Series, Visit, VisitReading
 from network.numerics import recorder_checks as kernel
 from network.queries import gauges, in_force
 from network.queries.working_rules import rules
@@ -38,6 +38,16 @@ class Proposal:
 
     check: RecorderCheck
     correction: kernel.ProposedCorrection
+
+    @property
+    def start_at(self) -> datetime:
+        """Return the instant of the check before."""
+        return datetime.fromtimestamp(self.correction.start_s, UTC)
+
+    @property
+    def end_at(self) -> datetime:
+        """Return the instant of this check."""
+        return datetime.fromtimestamp(self.correction.end_s, UTC)
 
 
 def compared(checks: Iterable[RecorderCheck]) -> list[Compared]:
@@ -82,6 +92,18 @@ def open_proposals(series: Series) -> list[Proposal]:
         for row in proposals(series)
         if (row.correction.start_s, row.correction.end_s) not in taken
     ]
+
+
+def open_proposals_of_visit(visit: Visit) -> list[Proposal]:
+    """Return the open proposals that end at a recorder check of a visit."""
+    series = Series.objects.filter(recorder_checks__visit=visit).distinct()
+    return [row for one in series for row in open_proposals(one) if row.check.visit_id == visit.pk]
+
+
+def corrections_of_visit(visit: Visit) -> list[Correction]:
+    """Return the standing corrections proposed from recorder checks of a visit."""
+    rows = Correction.objects.standing().filter(recorder_check__visit=visit)
+    return list(rows.select_related("series").order_by("start_at"))
 
 
 def time_shifts(series: Series) -> Sequence[kernel.ProposedTimeShift]:

@@ -10,7 +10,7 @@ from django.urls import reverse
 from django.utils import timezone
 from PIL import Image
 
-from network.models import Photograph, StaffPlate, Visit, WorkLeft
+from network.models import Correction, Photograph, StaffPlate, Visit, WorkLeft
 from tests import gauge_world as world
 from tests.gauge_world import plate
 
@@ -167,6 +167,14 @@ def test_a_reading_above_its_plate_is_a_finding_at_its_field_and_still_saved(cli
     assert Visit.objects.get().readings.get().reading_m == 1.75
 
 
+def test_empty_lines_do_not_shift_a_finding_or_a_refusal(client, where):
+    empty = reading(0, "10:00", plate(where, "P1"), "")
+    form = sent(where, empty, reading(1, "10:05", plate(where, "P1"), "1,75"))
+    assert 'data-cell="readings-1-reading_m"' in live(client, where, form)
+    form |= at("readings-1-read_at", "10:05", TOMORROW)
+    assert list(errors(client.post(ADD, form))) == ["readings-1-read_at"]
+
+
 def test_a_negative_stage_is_a_finding_at_its_field(client, where):
     answer = live(client, where, sent(where, reading(0, "10:05", plate(where, "P1"), "−0,05")))
     assert 'data-cell="readings-0-reading_m"' in answer
@@ -186,6 +194,29 @@ def test_a_dry_gauge_with_a_value_is_refused_at_its_row_and_the_rest_kept(client
     assert 'value="0,4"' in page.content.decode()
     assert 'value="rain"' in page.content.decode()
     assert not Visit.objects.exists()
+
+
+@pytest.fixture
+def keeper(client, record_keeper):
+    client.force_login(record_keeper)
+    return client
+
+
+def test_a_check_proposes_corrections_which_are_accepted_from_the_visit(keeper, where):
+    read = {"found_m": "0,50", "left_m": "0,50", "staff_stage_m": "0,50"}
+    before = at("arrived_at", "09:00", "2024-04-14") | at("departed_at", "11:00", "2024-04-14")
+    before |= check(where, **read) | at("recorder_checks-0-checked_at", "10:10", "2024-04-14")
+    keeper.post(ADD, sent(where, **before))
+    keeper.post(ADD, sent(where, **check(where, **read | {"found_m": "0,53"})))
+    visit = Visit.objects.order_by("arrived_at").last()
+    address = reverse("admin:network_visit_change", args=[visit.pk])
+    propose = reverse("admin:network_visit_propose", args=[visit.pk])
+    assert propose in keeper.get(address).content.decode()
+    keeper.post(propose)
+    row = Correction.objects.get()
+    assert (row.start_offset_m, row.end_offset_m) == (0, pytest.approx(-0.03))
+    accept = reverse("admin:network_correction_accept", args=[row.pk])
+    assert accept in keeper.get(address).content.decode()
 
 
 TOMORROW = (timezone.now() + timedelta(days=2)).date().isoformat()

@@ -14,11 +14,25 @@
     return data;
   };
 
+  const fieldOf = (name) => form.querySelector(`[name="${CSS.escape(name)}"], [name="${CSS.escape(name)}_0"]`);
+
+  // Write a stage or a finding under its field; the list at the foot stays for those without script.
+  const write = (name, text, kind) => {
+    const field = fieldOf(name);
+    const cell = field?.closest("td, .form-row");
+    if (!cell || !text) return;
+    const said = document.createElement("p");
+    said.className = `beside ${kind}`;
+    said.textContent = text;
+    cell.append(said);
+    if (kind === "finding") field.setAttribute("aria-invalid", "true");
+  };
+
   const mark = () => {
+    form.querySelectorAll(".beside").forEach((said) => said.remove());
     form.querySelectorAll("[aria-invalid]").forEach((field) => field.removeAttribute("aria-invalid"));
-    answer.querySelectorAll("[data-cell]").forEach((item) => {
-      form.querySelector(`[name="${CSS.escape(item.dataset.cell)}"]`)?.setAttribute("aria-invalid", "true");
-    });
+    answer.querySelectorAll("[data-beside]").forEach((item) => write(item.dataset.beside, `= ${item.textContent}`, "stage"));
+    answer.querySelectorAll("[data-cell]").forEach((item) => write(item.dataset.cell, item.textContent, "finding"));
   };
 
   const ask = async () => {
