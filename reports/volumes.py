@@ -119,11 +119,12 @@ def _bind(volume: pikepdf.Pdf, part: Part) -> OutlineItem:
     with pikepdf.open(part.pdf) as station:
         start = len(volume.pages)
         volume.pages.extend(station.pages)
-        bound = {page.objgen: start + at for at, page in enumerate(station.pages)}
+        new = volume.pages[start:]
+        bound = {old.objgen: page.obj for old, page in zip(station.pages, new, strict=True)}
         bookmark = OutlineItem(part.heading, start)
         bookmark.is_closed = True
         with station.open_outline() as outline:
-            bookmark.children.extend(_bookmarks(outline.root, volume, bound))
+            bookmark.children.extend(_bookmarks(outline.root, bound))
         for name, kept in station.attachments.items():
             own = kept.obj.EF.F
             volume.attachments[name] = pikepdf.AttachedFileSpec(
@@ -139,18 +140,16 @@ def _bind(volume: pikepdf.Pdf, part: Part) -> OutlineItem:
     return bookmark
 
 
-def _bookmarks(
-    items: Sequence[OutlineItem], volume: pikepdf.Pdf, bound: dict[Any, int]
-) -> list[OutlineItem]:
+def _bookmarks(items: Sequence[OutlineItem], bound: dict[Any, Any]) -> list[OutlineItem]:
     """Copy bookmarks, their pages exchanged for the bound ones."""
     copies = []
     for item in items:
         destination: Any = item.destination
         page, *place = destination
-        target = Array([volume.pages[bound[page.objgen]].obj, *place])
+        target = Array([bound[page.objgen], *place])
         copy = OutlineItem(item.title, target)
         copy.is_closed = True
-        copy.children.extend(_bookmarks(item.children, volume, bound))
+        copy.children.extend(_bookmarks(item.children, bound))
         copies.append(copy)
     return copies
 
