@@ -7,12 +7,14 @@ from django.contrib.admin.utils import quote
 from django.db import models
 from django.http import HttpRequest, HttpResponse
 from django.urls import reverse
+from django.utils.html import format_html
 from django.utils.text import capfirst
 from django.utils.translation import gettext_lazy as _
 
 from network.admin.acting import RegistryAdmin
 from network.admin.children import ChildRows
 from network.admin.intervals import IntervalPages, interval_verb
+from network.admin.station_file import ZERO_VERB, StationFilePage
 from network.admin.work import panel_context
 from network.models import Document, OperationPeriod, SiteCriterion, SiteSurvey, Station
 
@@ -24,10 +26,10 @@ class OperationPeriodRows(ChildRows):
 
 
 @admin.register(Station)
-class StationAdmin(IntervalPages, RegistryAdmin):
+class StationAdmin(StationFilePage, IntervalPages, RegistryAdmin):
     """Stations."""
 
-    list_display = ("code", "name", "river", "kind", "office")
+    list_display = ("code", "name", "river", "kind", "office", "file")
     list_display_links = ("code", "name")
     list_filter = ("office", "kind")
     list_select_related = ("office",)
@@ -35,7 +37,7 @@ class StationAdmin(IntervalPages, RegistryAdmin):
     inlines = (OperationPeriodRows,)
     figure_fields = frozenset({"kind", "unrated_because", "catchment_km2"})
     change_form_template = "admin/network/station/change_form.html"
-    verbs = (interval_verb(Station),)
+    verbs = (ZERO_VERB, interval_verb(Station))
     fieldsets = (
         (None, {"fields": ("code", "name", "river", "basin", "office")}),
         (_("Before you go"), {"fields": ("hazards", "safety_notes", "access_notes")}),
@@ -66,17 +68,23 @@ class StationAdmin(IntervalPages, RegistryAdmin):
         ),
     )
 
+    @admin.display(description=_("file"))
+    def file(self, station: Station) -> str:
+        """Lead to the station's file."""
+        address = reverse("admin:network_station_file", args=[station.pk])
+        return format_html('<a href="{}">{}</a>', address, _("open"))
+
     def render_change_form(
         self, request: HttpRequest, context: dict[str, Any], **options: Any
     ) -> HttpResponse:
         """Add the ways from the station to everything that belongs to it."""
         station = options.get("obj")
-        context["belongings"] = self._belongings(request, station) if station else []
+        context["belongings"] = self.belongings(request, station) if station else []
         if station:
             context.update(panel_context(request, station=station.pk))
         return super().render_change_form(request, context, **options)
 
-    def _belongings(self, request: HttpRequest, station: Station) -> list[dict[str, str]]:
+    def belongings(self, request: HttpRequest, station: Station) -> list[dict[str, str]]:
         """Return, for every registered model that names a station, its list and its add page."""
         found = []
         for model, model_admin in self.admin_site._registry.items():

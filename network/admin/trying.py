@@ -4,7 +4,7 @@ Put `Tried` before ServedAdmin among the bases of a noun whose rows change the p
 same by `Verb(station_of=…)`. An act that changes nothing published is done at once.
 """
 
-from collections.abc import Callable
+from collections.abc import Callable, Mapping
 from typing import Any
 
 from django.contrib import messages
@@ -26,16 +26,20 @@ def tried(
     act: Callable[[], Any],
     *,
     touches_readings: bool = False,
+    look: Callable[[], Mapping[str, Any]] | None = None,
 ) -> Any:
     """Do the act if its differences were seen or are none; else keep them for the page and return
     None. Refusals pass through, one of them where the record moved since it was shown.
+    With `look`, other answers are compared too, and the page is shown in any case.
     """
     if EDIT in request.POST:
         raise Refusal(_("Nothing was written. Change what you typed, then save again."))
     seen = request.POST.get(SEEN)
     if not seen:
-        found = trial.before_and_after(station, act, touches_readings=touches_readings)
-        if not found.is_nothing:
+        found = trial.before_and_after(
+            station, act, touches_readings=touches_readings, look=look or dict
+        )
+        if look or not found.is_nothing:
             request.differences = found  # type: ignore[attr-defined]
             return None
         messages.info(request, _("No published figure and no gauging changed."))

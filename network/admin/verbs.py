@@ -1,7 +1,8 @@
 """Pages for acts on one row: check, reopen, withdraw, adopt; a form, a preview, one POST."""
 
-from collections.abc import Callable
+from collections.abc import Callable, Mapping
 from dataclasses import dataclass
+from functools import partial
 from typing import Any
 
 from django import forms
@@ -44,7 +45,10 @@ class Verb:
     `run(row, by=, at=, **cleaned)` is the service; `preview(request, row, form)` returns the HTML
     of before and after, called when the page opens and again when "show" is pressed.
     With `station_of` the act is tried first: what it would change at that station is shown, and
-    done once confirmed (network/admin/trying.py); say whether it touches readings.
+    done once confirmed (network/admin/trying.py); say whether it touches readings. `look(row,
+    **cleaned)` gives other answers to compare; `compare` makes `changes` of both sides for the
+    template `shown_by`, and the page then always comes before the act.
+    `form_for(row)` makes the form where it depends on the row.
     """
 
     name: str
@@ -57,6 +61,10 @@ class Verb:
     caution: Any = ""
     station_of: Callable[[Any], Station] | None = None
     touches_readings: bool = False
+    form_for: Callable[[Any], type[forms.Form]] | None = None
+    look: Callable[..., Mapping[str, Any]] | None = None
+    compare: Callable[[Mapping[str, Any]], Any] | None = None
+    shown_by: str = ""
 
 
 class VerbPages:
@@ -93,7 +101,8 @@ class VerbPages:
         if not verb.applies(row):
             messages.warning(request, _t("This is done already, or cannot be done now."))
             return self._to_row(row)
-        form = verb.form(request.POST if request.method == "POST" else None)
+        form_class = verb.form_for(row) if verb.form_for else verb.form
+        form = form_class(request.POST if request.method == "POST" else None)
         meant = request.method == "POST" and "_show" not in request.POST
         if meant and form.is_valid() and _done(verb, row=row, form=form, request=request):
             if hasattr(request, "differences"):
@@ -107,8 +116,11 @@ class VerbPages:
         self, request: HttpRequest, *, row: models.Model, verb: Verb
     ) -> HttpResponse:
         context = self.admin_site.each_context(request)  # type: ignore[attr-defined]
-        title = capfirst(str(verb.label))
-        return trying.page(request, **context, opts=row._meta, title=title, subtitle=str(row))
+        context |= {"title": capfirst(str(verb.label)), "subtitle": str(row), "opts": row._meta}
+        if verb.compare is not None:
+            more = request.differences.more  # type: ignore[attr-defined]
+            context |= {"changes": verb.compare(more), "shown_by": verb.shown_by}
+        return trying.page(request, **context)
 
     def _view_of(self, verb: Verb) -> Callable[..., HttpResponse]:
         def view(request: HttpRequest, object_id: str) -> HttpResponse:
@@ -160,8 +172,13 @@ def _done(verb: Verb, *, row: models.Model, form: forms.Form, request: HttpReque
             if verb.station_of is None:
                 act()
             else:
-                station = verb.station_of(row)
-                trying.tried(request, station, act, touches_readings=verb.touches_readings)
+                trying.tried(
+                    request,
+                    verb.station_of(row),
+                    act,
+                    touches_readings=verb.touches_readings,
+                    look=verb.look and partial(verb.look, row, **form.cleaned_data),
+                )
     except Refusal as refusal:
         known = refusal.field in form.fields
         form.add_error(refusal.field if known else None, refusal.sentence)

@@ -2,7 +2,7 @@
 
 from collections.abc import Iterable, Mapping, Sequence
 from dataclasses import dataclass
-from datetime import datetime
+from datetime import UTC, datetime
 from typing import Any
 
 from network.models import Gauging, StageReading, Station, VisitReading
@@ -28,8 +28,17 @@ class CorrectionChange:
     after: ProposedCorrection | None
 
     @property
-    def period(self) -> ProposedCorrection:
-        """Either side: both speak of one period."""
+    def start_at(self) -> datetime:
+        """When the period starts; both sides speak of the same."""
+        return datetime.fromtimestamp(self._either.start_s, UTC)
+
+    @property
+    def end_at(self) -> datetime:
+        """When the period ends."""
+        return datetime.fromtimestamp(self._either.end_s, UTC)
+
+    @property
+    def _either(self) -> ProposedCorrection:
         found = self.before or self.after
         assert found is not None
         return found

@@ -13,6 +13,7 @@ from network.queries.working_rules import rules
 HEIGHT = 320.0  # units of the picture for the whole range
 MARGIN = 24.0
 FIRST_X = 62.0
+AXIS_LEFT = 14.0
 COLUMN = 62.0
 WIDE = 26.0
 STEPS_M = (0.05, 0.1, 0.2, 0.5, 1.0, 2.0, 5.0)
@@ -25,6 +26,13 @@ class Tick:
 
     y: float
     stage_m: float
+    x: float = FIRST_X - AXIS_LEFT - 5
+    text_x: float = FIRST_X - AXIS_LEFT - 8
+
+    @property
+    def text_y(self) -> float:
+        """Where its figure stands."""
+        return self.y + 4
 
 
 @dataclass(frozen=True)
@@ -43,6 +51,16 @@ class Bar:
     def middle(self) -> float:
         """Where its label is centred."""
         return self.x + WIDE / 2
+
+    @property
+    def mark_x(self) -> float:
+        """Where its marks end."""
+        return self.x + WIDE / 3
+
+    @property
+    def label_y(self) -> float:
+        """Where its label stands."""
+        return self.y - 6
 
 
 @dataclass(frozen=True)
@@ -69,6 +87,13 @@ class Drawing:
     bars: Sequence[Bar]
     bands: Sequence[Band]
     findings: Sequence[kernel.PlateFinding]
+    top: float = MARGIN
+    bottom: float = MARGIN + HEIGHT
+
+    @property
+    def band_width(self) -> float:
+        """How wide a band is."""
+        return self.width - self.axis_x
 
 
 def drawing(station: Station, instant: datetime) -> Drawing | None:
@@ -88,7 +113,7 @@ def drawing(station: Station, instant: datetime) -> Drawing | None:
         width=FIRST_X + COLUMN * len(plates),
         height=HEIGHT + 2 * MARGIN,
         bar_width=WIDE,
-        axis_x=FIRST_X - 14,
+        axis_x=FIRST_X - AXIS_LEFT,
         ticks=[Tick(y(stage), stage) for stage in _ticks(lowest, highest)],
         bars=[
             Bar(

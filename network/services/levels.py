@@ -18,10 +18,10 @@ from network.models import (
     Sight,
     StaffPlate,
 )
-from network.queries import adoption, levels
+from network.queries import levels
 from network.queries.level_sheet import LevelSheet
 from network.services import benchmarks as marks
-from network.services import field_books, gauges, trial
+from network.services import field_books, gauges
 from network.services.acts import (
     Refusal,
     claim_version,
@@ -126,36 +126,6 @@ def adopt(
     return zeros
 
 
-def try_adoption(
-    *,
-    level_check: LevelCheck,
-    effective_from: datetime,
-    by: Person,
-    at: datetime,
-    reason: str,
-    plates: Sequence[StaffPlate] | None = None,
-    benchmarks: Sequence[Benchmark] = (),
-) -> trial.Differences:
-    """Show what adopting would change; `more` holds stages of readings and corrections proposed."""
-    station = level_check.station
-
-    def act() -> None:
-        adopt(
-            level_check=level_check,
-            effective_from=effective_from,
-            by=by,
-            at=at,
-            reason=reason,
-            plates=plates,
-            benchmarks=benchmarks,
-        )
-
-    def look() -> Mapping[str, Any]:
-        return adoption.look(station, since=effective_from)
-
-    return trial.before_and_after(station, act, look=look)
-
-
 def _chosen_plates(
     reduction: levels.Reduction, plates: Sequence[StaffPlate] | None
 ) -> list[levels.PlateFound]:
@@ -212,7 +182,7 @@ def _between(effective_from: datetime, check: LevelCheck) -> Q:
 def _write_peg_test(check: LevelCheck, sheet: LevelSheet) -> None:
     stored = PegTest.objects.filter(level_check=check).first()
     rows = [] if sheet.peg is None else [(stored.pk if stored else None, vars(sheet.peg))]
-    field_books.keep_in_step(PegTest, {"level_check": check}, rows, called="peg")
+    field_books.keep_in_step(PegTest, {"level_check": check}, rows, called="peg_test")
 
 
 def _write_sights(check: LevelCheck, sheet: LevelSheet) -> None:

@@ -9,7 +9,7 @@ from network.models import LevelCheck, Sight
 from network.queries import adoption
 from network.queries import levels as answers
 from network.queries.visit_sheet import CheckRow, ReadingRow
-from network.services import benchmarks, gauges, levels, visits
+from network.services import benchmarks, gauges, levels, trial, visits
 from network.services.acts import Overtaken, Refusal
 from tests import field_world
 from tests import gauge_world as world
@@ -198,8 +198,9 @@ def test_before_and_after_shows_stages_and_the_corrections_that_follow(where):
             by=field_world.person(),
             at=LATER + timedelta(minutes=number),
         )
-    found = levels.try_adoption(
-        level_check=world.checked_levels(where), effective_from=LIFTED, **signed()
+    check = world.checked_levels(where)
+    found = trial.before_and_after(
+        where, lambda: adopt(check), look=lambda: adoption.look(where, since=LIFTED)
     )
     changes = adoption.changes(found.more)
     assert [(c.before_m, c.after_m) for c in changes.visits] == [(1.5, 1.5205)] * 2
