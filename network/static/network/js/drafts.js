@@ -99,6 +99,9 @@
     addEventListener("pagehide", () => { if (timer) { clearTimeout(timer); keep(form); } });
   };
 
+  // The page between a form and its act carries what was typed along; its draft is the form's.
+  const keepsDraft = (form) => form.elements.form_id && !form.hasAttribute("data-confirms");
+
   const answers = () => fetch(script.src, { method: "HEAD", cache: "no-store", signal: AbortSignal.timeout(10000) });
 
   const sendOnce = (form) => {
@@ -109,7 +112,7 @@
       if (form.dataset.sending) return; // the second tap
       form.dataset.sending = "asking";
       form.setAttribute("aria-busy", "true");
-      if (form.elements.form_id) keep(form);
+      if (keepsDraft(form)) keep(form);
       try {
         await answers();
         form.dataset.sending = "now";
@@ -138,7 +141,7 @@
   document.querySelectorAll("form[data-once]").forEach((form) => {
     sendOnce(form);
     // Rows are added by Django's script, whose buttons stand a moment after the page has loaded.
-    if (form.elements.form_id) addEventListener("load", () => setTimeout(draftKeeping, 50, form));
+    if (keepsDraft(form)) addEventListener("load", () => setTimeout(draftKeeping, 50, form));
   });
   const section = document.getElementById("unfinished");
   if (section) listUnfinished(section);
