@@ -7,6 +7,7 @@ from datetime import UTC, date, datetime, timedelta
 from typing import Any
 
 from django.db import transaction
+from django.utils.translation import gettext as _
 
 from network.models import (
     Block,
@@ -26,6 +27,7 @@ from network.models import (
     Visit,
     WorkLeft,
 )
+from network.services.acts import Refusal
 
 DAY = timedelta(days=1)
 BATCH = 2_000
@@ -65,8 +67,11 @@ class _Making:
 def make(*, size: Size, by: Person, at: datetime, seed: int = 1, first: int = 0) -> None:
     """Fill a database with a network; about every seventh item of work is due.
 
-    first: number of the first station and instrument, for a network that grows.
+    first: number of the first station and instrument, for a network that grows. Refuses a database
+    that holds more stations than that.
     """
+    if Station.objects.count() > first:
+        raise Refusal(_("This database holds stations; generate into an empty one."))
     making = _Making(size, random.Random(seed), by, at.astimezone(UTC), first)
     offices = _keep(
         Office, (Office(name=f"Office {first:04d}-{n:02d}") for n in range(size.offices))

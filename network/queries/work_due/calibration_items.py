@@ -80,7 +80,7 @@ def hours_of_use(asked: Asked, rows: list[CalibratedRow]) -> dict[int, Use]:
         made = made.filter(pair__in=since)
     sums = made.order_by().values("pair").annotate(used=Sum(USED))
     least = min(row.hours for row in rows if row.hours)
-    much_used = made.filter(pair__in=sums.filter(used__gte=least).values("pair"))
+    much_used = Gauging.objects.filter(pair__in=sums.filter(used__gte=least).values("pair"))
     found: dict[int, Use] = defaultdict(list)
     days = much_used.order_by("started_at").values_list(
         "pair", RecordDay("started_at", of=asked.agency), USED

@@ -1,6 +1,6 @@
 """What was begun and not finished: sheets nobody checked, and work left at a visit."""
 
-from collections.abc import Iterator
+from collections.abc import Iterator, Mapping
 from datetime import date, timedelta
 from typing import Any, NamedTuple
 
@@ -18,7 +18,6 @@ class OpenRow(NamedTuple):
     kind: Kind
     key: int
     station: int
-    office: int
     since: date
     text: str
     recorded_by: int
@@ -46,14 +45,18 @@ def open_rows(asked: Asked) -> list[OpenRow]:
     return [OpenRow(Kind(kind), *more) for kind, *more in found]
 
 
-def items(asked: Asked, rows: list[OpenRow]) -> Iterator[Item]:
-    """Yield what has waited for longer than a sheet may, and all work left."""
+def items(asked: Asked, rows: list[OpenRow], offices: Mapping[int, int]) -> Iterator[Item]:
+    """Yield what has waited for longer than a sheet may, and all work left.
+
+    offices: of the stations, by key; joined here they would cost a walk through all visits.
+    """
     for row in rows:
         every = None if row.kind == Kind.LEFT else asked.rules.check_days
         due_on = row.since + timedelta(days=every or 0)
         if due_on <= asked.until:
             facts = (row.text,)
-            yield Item(row.kind, row.key, row.station, row.office, row.since, due_on, every, facts)
+            office = offices[row.station]
+            yield Item(row.kind, row.key, row.station, office, row.since, due_on, every, facts)
 
 
 def _alike(
@@ -65,7 +68,6 @@ def _alike(
         Value(kind.value, CharField()),
         Cast("pk", IntegerField()),
         F(f"{of}station"),
-        F(f"{of}station__office"),
         RecordDay(at, of=asked.agency),
         Cast(text, CharField()),
         F(f"{of}recorded_by"),

@@ -169,7 +169,7 @@ def _found(asked: Asked) -> Found:
     of_stations = chain(
         station_items.items(asked, stations),
         safety_items.items(asked),
-        open_items.items(asked, open_rows),
+        open_items.items(asked, open_rows, {row.pk: row.office for row in stations}),
         doubt_items.items(asked),
     )
     if asked.station is not None:

@@ -93,7 +93,7 @@ def _values(line: Line) -> list[Any]:
 def _answered_by(whole: WorkList) -> Iterator[None]:
     """Let the page read its lines, counts and choices from the table for a while."""
     computed = work_list.work_list
-    work_list.work_list = lambda *_asked, **_told: _read(whole)  # type: ignore[assignment]
+    work_list.work_list = lambda *_asked, **_told: _read(whole)
     try:
         yield
     finally:
