@@ -6,7 +6,7 @@ from pathlib import Path
 import pytest
 
 from network.models import Act, Job
-from network.services import jobs, notes, typed_flows
+from network.services import jobs, notes, trial, typed_flows
 from network.services.acts import Refusal
 from reports import editions, rendering, services
 from reports.models import Edition
@@ -159,6 +159,12 @@ def test_an_act_that_touches_a_day_finds_the_issued_edition(issued):
     assert editions.touched_by(issued.station, [inside]) == [issued]
     assert editions.touched_by(issued.station, [outside]) == []
     assert editions.touched_by(issued.station, []) == []
+
+
+def test_a_tried_act_names_the_issued_edition_it_touches(issued, keeper):
+    found = trial.before_and_after(issued.station, lambda: change_a_day(issued.station, keeper))
+    assert list(found.editions) == [issued]
+    assert editions.changed_since(issued) == []
 
 
 def test_compiling_as_long_work_ends_with_the_edition(
