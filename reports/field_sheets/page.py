@@ -1,6 +1,5 @@
 """Field sheets become HTML, then PDF; a code on each opens the visit form of its stop."""
 
-import io
 from pathlib import Path
 from types import SimpleNamespace
 from typing import Any
@@ -45,10 +44,9 @@ def address_of(stop: Stop) -> str:
 
 def code_of(stop: Stop) -> str:
     """Return the address of a stop as a QR code, in SVG; a smudge of 15 % is borne (level M)."""
-    out = io.BytesIO()
     code = segno.make(address_of(stop), error="m", micro=False)
-    code.save(out, kind="svg", border=4, omitsize=True, xmldecl=False)
-    return out.getvalue().decode()
+    bare = code.svg_inline(border=4, omitsize=True)
+    return bare.replace("<svg", '<svg xmlns="http://www.w3.org/2000/svg"', 1)
 
 
 def _figures(sheets: RoundSheets) -> dict[str, str]:
