@@ -27,6 +27,12 @@ class AtStation:
         chosen: Station | None = request.station_asked  # type: ignore[attr-defined]
         return chosen
 
+    def get_changeform_initial_data(self, request: HttpRequest) -> dict[str, Any]:
+        """Start at the station the address asks for, by its key or its code."""
+        asked: dict[str, Any] = super().get_changeform_initial_data(request)  # type: ignore[misc]
+        station = self.station_of_page(request)
+        return asked if station is None else {**asked, "station": station.pk}
+
     def changeform_view(
         self,
         request: HttpRequest,

@@ -103,6 +103,7 @@ def test_a_visit_starts_with_what_is_usual_at_its_station(client, where, field_p
     page = client.get(f"{ADD}?station={getattr(where, by)}")
     form = page.context["adminform"].form
     readings, checks = [shown.formset for shown in page.context["inline_admin_formsets"]][:2]
+    assert form["station"].value() == where.pk
     assert form["party"].value() == [field_person.pk]
     assert readings.forms[0]["gauge"].value() == f"plate:{plate(where, 'P1').pk}"
     assert checks.forms[0]["series"].value() == where.series.get().pk
