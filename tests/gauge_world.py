@@ -1,12 +1,12 @@
 """A station with two plates and a benchmark, and a level book over them worked by hand."""
 
-from datetime import UTC, datetime
+from datetime import UTC, datetime, timedelta
 from uuid import uuid4
 
 from network.models import Series, Sight
 from network.queries.level_sheet import LevelSheet, PegRow, SightRow
-from network.queries.visit_sheet import VisitSheet
-from network.services import benchmarks, gauges, levels, series, station_zeros
+from network.queries.visit_sheet import CheckRow, ReadingRow, VisitSheet
+from network.services import benchmarks, gauges, levels, series, station_zeros, visits
 from tests import field_world as world
 
 SINCE = datetime(2020, 1, 1, tzinfo=UTC)
@@ -130,3 +130,17 @@ def checked_levels(where, **changes):
 
 def visit_sheet(where, **changes):
     return VisitSheet(**{"station": where, "arrived_at": LEVELLED} | changes)
+
+
+def read_twice(where, since):
+    """Two visits 28 days apart: P2 read at 0.500, the recorder right beside it."""
+    for days in (2, 30):
+        at = since + timedelta(days=days)
+        reading = ReadingRow(read_at=at, plate=plate(where, "P2"), reading_m=0.5)
+        check = CheckRow(series=where.series.get(), checked_at=at, found_m=1.5)
+        visits.save_visit(
+            form_id=uuid4(),
+            sheet=visit_sheet(where, arrived_at=at, readings=(reading,), recorder_checks=(check,)),
+            by=world.person(),
+            at=LATER,
+        )

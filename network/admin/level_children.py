@@ -16,6 +16,12 @@ from network.queries.level_sheet import LevelSheet, PegRow, SightRow
 
 Choices = list[tuple[str, Any]]
 BLANK_LINES = 8
+SHORT_LABELS = {
+    "graduation_m": _("plate at, m"),
+    "backsight_m": _("backsight, m"),
+    "intermediate_m": _("intermediate, m"),
+    "foresight_m": _("foresight, m"),
+}
 
 
 class PegTests(ChildCards):
@@ -36,6 +42,9 @@ class SightForm(forms.ModelForm):
     def __init__(self, *args: Any, **options: Any) -> None:
         super().__init__(*args, **options)
         self.fields["on"].choices = [("", "–"), *self.point_choices]
+        for name, label in SHORT_LABELS.items():
+            if name in self.fields:
+                self.fields[name].label = label
         if self.instance.pk:
             self.fields["on"].initial = point_value(self.instance)
 
@@ -58,8 +67,10 @@ class Sights(ChildRows):
     model = Sight
     form = SightForm
     prefix = "sights"
-    fields = ("on", "graduation_m", "backsight_m", "intermediate_m", "foresight_m", "remark",
-              "after")  # fmt: skip
+    fields = (
+        *("on", "graduation_m", "backsight_m", "intermediate_m", "foresight_m"),
+        *("after", "remark"),
+    )
     can_delete = True
 
     def get_extra(self, request: HttpRequest, obj: Any = None, **options: Any) -> int:

@@ -45,7 +45,11 @@ def adoption_form(check: LevelCheck) -> type[forms.Form]:
     """Ask which zeros found hold from when; those in error are chosen."""
     reduction = answers.reduction_of(check)
     plates = {row.plate: _said(row.plate, row) for row in reduction.plates}
-    marks = {row.benchmark: _said(row.benchmark, row) for row in reduction.benchmarks}
+    marks = {
+        row.benchmark: _said(row.benchmark, row)
+        for row in reduction.benchmarks
+        if round(row.difference_mm, 1)  # the mark that closes the run agrees by construction
+    }
     off = [row.plate.pk for row in reduction.plates if row.error_mm]
     fields: dict[str, forms.Field] = {
         "plates": Chosen(StaffPlate, plates, label=_("new zeros of"), initial=off)
@@ -62,7 +66,8 @@ def adoption_form(check: LevelCheck) -> type[forms.Form]:
 
 
 def _said(row: models.Model, found: Any) -> str:
-    return f"{row}: {found.found_m:.4f} m ({found.difference_mm:+.1f} mm)"
+    said = f"{found.found_m:.4f} m ({found.difference_mm:+.1f} mm)"
+    return f"{row}: {said.replace('-', '−')}"
 
 
 class LevelCheckForm(LiveForm):
@@ -80,7 +85,7 @@ class LevelCheckAdmin(AtStation, LivePages, ServedAdmin):
     """Level checks."""
 
     form = LevelCheckForm
-    change_form_template = "admin/network/answered_form.html"
+    change_form_template = "admin/network/levelcheck/change_form.html"
     answer_template = "admin/network/levelcheck/_answer.html"
     list_display = ("station", "levelled_at", "state", "adopted_at", "recorded_by")
     list_filter = ("state", "station")

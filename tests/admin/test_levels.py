@@ -138,6 +138,7 @@ def test_adopting_shows_before_and_after_and_then_sets_the_zero(client, where):
     address = change(check, "adopt")
     form = client.get(address).content.decode()
     assert "P2: 1.0205 m (+20.5 mm)" in form
+    assert "P1: −0.0010 m (−1.0 mm)" in form
     p2 = where.plates.get(label="P2")
     sent = {
         "plates": [p2.pk],

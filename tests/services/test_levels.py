@@ -8,8 +8,7 @@ import pytest
 from network.models import LevelCheck, Sight
 from network.queries import adoption
 from network.queries import levels as answers
-from network.queries.visit_sheet import CheckRow, ReadingRow
-from network.services import benchmarks, gauges, levels, trial, visits
+from network.services import benchmarks, gauges, levels, trial
 from network.services.acts import Overtaken, Refusal
 from tests import field_world
 from tests import gauge_world as world
@@ -186,18 +185,7 @@ def test_benchmarks_are_adopted_where_asked(where):
 
 def test_before_and_after_shows_stages_and_the_corrections_that_follow(where):
     """Two checks a month apart, the recorder right on the plate as it was read."""
-    series = where.series.get()
-    for number, at in enumerate((LIFTED + timedelta(days=2), LIFTED + timedelta(days=30))):
-        reading = ReadingRow(read_at=at, plate=plate(where, "P2"), reading_m=0.5)
-        check = CheckRow(series=series, checked_at=at, found_m=1.5)
-        visits.save_visit(
-            form_id=uuid4(),
-            sheet=world.visit_sheet(
-                where, arrived_at=at, readings=(reading,), recorder_checks=(check,)
-            ),
-            by=field_world.person(),
-            at=LATER + timedelta(minutes=number),
-        )
+    world.read_twice(where, LIFTED)
     check = world.checked_levels(where)
     found = trial.before_and_after(
         where, lambda: adopt(check), look=lambda: adoption.look(where, since=LIFTED)
