@@ -112,7 +112,15 @@ class Gauging(Recorded, Versioned):
         verbose_name = _("gauging")
         verbose_name_plural = _("gaugings")
         ordering = ["-started_at"]
-        indexes = [models.Index(fields=["station", "-started_at"], name="network_gauging_latest")]
+        indexes = [
+            models.Index(fields=["station", "-started_at"], name="network_gauging_latest"),
+            models.Index(
+                fields=["station", "started_at"],
+                condition=Q(checked_by__isnull=True),
+                name="network_gauging_unchecked",
+            ),
+            models.Index(fields=["pair", "started_at"], name="network_gauging_by_pair"),
+        ]
         constraints = [
             models.CheckConstraint(
                 name="network_gauging_ends_after_start",

@@ -48,7 +48,14 @@ class LevelCheck(Recorded, Versioned):
         verbose_name = _("level check")
         verbose_name_plural = _("level checks")
         ordering = ["-levelled_at"]
-        indexes = [models.Index(fields=["station", "-levelled_at"], name="network_levels_latest")]
+        indexes = [
+            models.Index(fields=["station", "-levelled_at"], name="network_levels_latest"),
+            models.Index(
+                fields=["station", "levelled_at"],
+                condition=Q(checked_by__isnull=True),
+                name="network_levels_unchecked",
+            ),
+        ]
 
     def __str__(self) -> str:
         return f"{self.station} {self.levelled_at:%Y-%m-%d}"

@@ -64,7 +64,14 @@ class Visit(Recorded, Versioned):
         verbose_name = _("visit")
         verbose_name_plural = _("visits")
         ordering = ["-arrived_at"]
-        indexes = [models.Index(fields=["station", "-arrived_at"], name="network_visit_latest")]
+        indexes = [
+            models.Index(fields=["station", "-arrived_at"], name="network_visit_latest"),
+            models.Index(
+                fields=["station", "arrived_at"],
+                condition=Q(checked_by__isnull=True),
+                name="network_visit_unchecked",
+            ),
+        ]
         constraints = [
             models.CheckConstraint(
                 name="network_visit_departed_after_arrived",
