@@ -66,7 +66,8 @@ class YearFigures:
 
 @dataclass(frozen=True, kw_only=True)
 class Extreme:
-    """An instantaneous extreme; the flow's text begins with "≥" when a gap may hide more."""
+    """An instantaneous extreme; the text of a flow, or of a stage where stage is published, begins
+    with "≥" when a gap may hide more."""
 
     stage_m: Number
     flow_m3s: Number = NO_NUMBER

@@ -2,7 +2,7 @@
 
 from calendar import isleap
 from collections.abc import Sequence
-from datetime import UTC, date, datetime, timedelta
+from datetime import UTC, datetime, timedelta
 
 import numpy as np
 
@@ -20,7 +20,6 @@ from reports.content.year_data import YearData
 from reports.printed import NO_EVENT, RECORDED, Event, Number
 
 UNRECORDED = Mark.MISSING | Mark.WITHHELD | Mark.PARTIAL
-ESTIMATES = Mark.ESTIMATED | Mark.TYPED
 
 
 def daily_table(data: YearData) -> y.DailyTable:
@@ -123,18 +122,19 @@ def _year(data: YearData, figures: KernelYear) -> y.YearFigures:
         mean=number(figures.mean),
         highest_day=Event(number(figures.maximum, _doubt(figures)), figures.maximum_day),
         lowest_day=Event(number(figures.minimum), figures.minimum_day),
-        lowest_seven_days=_seven_days(
-            data, figures.lowest_7_day_mean, figures.lowest_7_day_last_day
-        ),
+        lowest_seven_days=_seven_days(data, figures),
         volume_hm3=_volume(data, figures),
         runoff_mm=_runoff(data, figures),
         specific_ls_km2=data.printer.flow(specific),
     )
 
 
-def _seven_days(data: YearData, mean: float | None, last_day: date | None) -> Event:
+def _seven_days(data: YearData, figures: KernelYear | None) -> Event:
     """Print the lowest mean flow of seven days; of stage nobody asks for it."""
-    return NO_EVENT if data.stage_only else Event(data.printer.flow(mean), last_day)
+    if data.stage_only or figures is None:
+        return NO_EVENT
+    mean = data.printer.flow(figures.lowest_7_day_mean)
+    return Event(mean, figures.lowest_7_day_last_day)
 
 
 def _earlier_year(data: YearData) -> y.YearFigures | None:
@@ -146,14 +146,14 @@ def _earlier_year(data: YearData) -> y.YearFigures | None:
         for year, part in zip(data.earlier_years, data.earlier, strict=True)
     ]
     figures, number = over_years(years), _number(data)
-    sevens = [(f.lowest_7_day_mean, f.lowest_7_day_last_day) for f in years if f.lowest_7_day_mean]
-    seven, seven_day = min(sevens, default=(None, None))
+    sevens = [f for f in years if f.lowest_7_day_mean is not None]
+    seven = min(sevens, key=lambda f: f.lowest_7_day_mean, default=None)
     complete = [f for f in years if f.mean is not None]
     return y.YearFigures(
         mean=number(figures.mean),
         highest_day=Event(number(figures.maximum), figures.maximum_day),
         lowest_day=Event(number(figures.minimum), figures.minimum_day),
-        lowest_seven_days=_seven_days(data, seven, seven_day),
+        lowest_seven_days=_seven_days(data, seven),
         volume_hm3=_mean(data, [f.volume_hm3 for f in complete]),
         runoff_mm=_mean(data, [_runoff_value(data, f) for f in complete]),
         specific_ls_km2=_mean(data, [_specific_value(data, f) for f in complete]),
@@ -211,7 +211,10 @@ def _extremes(data: YearData) -> y.Extremes:
 
 
 def _extreme(data: YearData, parts: Sequence[StationDays], *, highest: bool) -> y.Extreme:
-    """Find the highest or lowest reading; a daily value beyond all readings stands in for it."""
+    """Find the highest or lowest reading; a daily value beyond all readings stands in for it.
+
+    The peak of a day is at least its mean, and more may have fallen where no reading is.
+    """
     kind = "highest" if highest else "lowest"
     extremes: list[DailyExtremes] = [p.stage if data.stage_only else p.flow for p in parts]
     values = np.concatenate([getattr(each, kind) for each in extremes])
@@ -225,7 +228,7 @@ def _extreme(data: YearData, parts: Sequence[StationDays], *, highest: bool) -> 
     if typed.max() > read.max():
         at = int(np.argmax(typed))
         day = np.concatenate([part.days for part in parts])[at].astype(object)
-        return _told(data, float(daily[at]), None, day, at_least=False)
+        return _told(data, float(daily[at]), None, day, at_least=highest)
     at = int(np.argmax(read))
     instant = datetime.fromtimestamp(int(times[at]), UTC) if times[at] != NO_TIME_S else None
     doubt = highest and any(bool((part.marks & UNRECORDED).any()) for part in parts)
@@ -234,7 +237,7 @@ def _extreme(data: YearData, parts: Sequence[StationDays], *, highest: bool) -> 
 
 def _told(data, value, instant, day, *, at_least: bool) -> y.Extreme:
     if data.stage_only:
-        return y.Extreme(stage_m=data.printer.stage(value), at=instant or day)
+        return y.Extreme(stage_m=data.printer.stage(value, at_least=at_least), at=instant or day)
     return y.Extreme(
         stage_m=data.printer.stage(_stage_at(data, instant) if instant else None),
         flow_m3s=data.printer.flow(value, at_least=at_least),

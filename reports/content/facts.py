@@ -5,7 +5,7 @@ from datetime import date, timedelta
 
 import numpy as np
 
-from network.models import Infill, Note, StationZero
+from network.models import Infill, Note, StationZero, TypedFlow
 from network.numerics.arrays import Bools
 from network.numerics.marks import Mark
 from network.queries.uncertainty import daily_u95
@@ -145,7 +145,7 @@ def _causes(data: YearData) -> list[str]:
 
 
 def _methods(data: YearData) -> list[tuple[str, float | None]]:
-    """Return, for each day, the method and ± % of its infill."""
+    """Return, for each day, the method and ± % of its infill or of the flow typed before it."""
     methods: list[tuple[str, float | None]] = [("", None)] * len(data.days.days)
     rows = Infill.objects.filter(station=data.station).standing()
     for row in rows.filter(first_day__lte=data.last, last_day__gte=data.first):
@@ -153,6 +153,9 @@ def _methods(data: YearData) -> list[tuple[str, float | None]]:
         if row.neighbour is not None:
             told = f"{told} ({row.neighbour.name})"
         _set(methods, data, row.first_day, row.last_day, (told, row.uncertainty_percent))
+    typed = TypedFlow.objects.filter(station=data.station).standing()
+    for row in typed.filter(day__range=(data.first, data.last)):
+        _set(methods, data, row.day, row.day, (row.method, row.uncertainty_percent))
     return methods
 
 

@@ -178,7 +178,7 @@ def rating_label(curve: Curve) -> str:
 def ratings(data: YearData) -> tuple[p.Rating, ...]:
     """Return the ratings of the year."""
     rows = rating_rows(data)
-    ends = [row.effective_from for row in rows[1:]]
+    ends = [*(row.effective_from for row in rows[1:]), None]
     return tuple(
         _rating(data, row, row.curve, until)
         for row, until in zip(rows, ends, strict=False)

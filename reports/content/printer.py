@@ -1,7 +1,7 @@
 """Numbers as this agency prints them."""
 
 import math
-from dataclasses import dataclass
+from dataclasses import dataclass, replace
 
 from network.models import Agency
 from network.numerics.marks import Mark
@@ -42,9 +42,12 @@ class Printer:
             _known(value), decimals, decimal_sign=self.decimal_sign, marks=marks, plus=plus
         )
 
-    def stage(self, value: float | None, marks: Mark = RECORDED) -> Number:
+    def stage(
+        self, value: float | None, marks: Mark = RECORDED, *, at_least: bool = False
+    ) -> Number:
         """Print a stage or elevation to the millimetre."""
-        return self.fixed(value, 3, marks)
+        number = self.fixed(value, 3, marks)
+        return replace(number, text=f"≥ {number.text}") if at_least else number
 
 
 def _known(value: float | None) -> float | None:
