@@ -147,7 +147,7 @@ def _earlier_year(data: YearData) -> y.YearFigures | None:
     ]
     figures, number = over_years(years), _number(data)
     sevens = [f for f in years if f.lowest_7_day_mean is not None]
-    seven = min(sevens, key=lambda f: f.lowest_7_day_mean, default=None)
+    seven = min(sevens, key=lambda f: f.lowest_7_day_mean or 0.0, default=None)
     complete = [f for f in years if f.mean is not None]
     return y.YearFigures(
         mean=number(figures.mean),
