@@ -23,8 +23,8 @@ class AtStation:
         if not hasattr(request, "station_asked"):
             key = Q(pk=asked) if asked.isdecimal() else Q(code=asked)
             found = Station.objects.filter(key).first()
-            request.station_asked = found  # type: ignore[attr-defined]
-        chosen: Station | None = request.station_asked  # type: ignore[attr-defined]
+            request.station_asked = found
+        chosen: Station | None = request.station_asked
         return chosen
 
     def get_changeform_initial_data(self, request: HttpRequest) -> dict[str, Any]:

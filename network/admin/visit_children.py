@@ -4,6 +4,7 @@ from collections.abc import Sequence
 from typing import Any, ClassVar
 
 from django import forms
+from django.contrib import admin
 from django.http import HttpRequest
 from django.utils import timezone
 from django.utils.translation import gettext as _t
@@ -49,7 +50,7 @@ class ReadingForm(forms.ModelForm):
         """Read which plate or gauge is meant."""
         cleaned = super().clean() or self.cleaned_data
         kind, _mark, key = str(cleaned.get("gauge", "")).partition(":")
-        model = {"plate": StaffPlate, "other_gauge": OtherGauge}.get(kind)
+        model: Any = {"plate": StaffPlate, "other_gauge": OtherGauge}.get(kind)
         cleaned |= {"plate": None, "other_gauge": None}
         if model is not None:
             cleaned[kind] = model.objects.filter(pk=key).first()
@@ -125,9 +126,14 @@ class Readings(Started, ChildRows):
         """Offer three lines to a new visit."""
         return 1 if obj is not None and obj.pk else 3
 
+    @admin.display(description=_("gauge"))
+    def gauge(self, row: VisitReading) -> str:
+        """Name the gauge where the reading is only looked at."""
+        return str(row.plate or row.other_gauge)
+
     def initial_rows(self, request: HttpRequest, station: Station) -> Sequence[dict[str, Any]]:
         """Start with the usual plate, now."""
-        sheet = start_sheet(station, by=request.user, at=request.opened_at)  # type: ignore[arg-type, attr-defined]
+        sheet = start_sheet(station, by=request.user, at=request.opened_at)
         return [
             {"read_at": row.read_at, "gauge": gauge_value(row.plate, None)}
             for row in sheet.readings
@@ -173,7 +179,7 @@ class RecorderChecks(Started, ChildCards):
     def initial_rows(self, request: HttpRequest, station: Station) -> Sequence[dict[str, Any]]:
         """Start with the primary recorder, now."""
         primary = station.series.filter(is_primary=True)
-        return [{"series": row.pk, "checked_at": request.opened_at} for row in primary]  # type: ignore[attr-defined]
+        return [{"series": row.pk, "checked_at": request.opened_at} for row in primary]
 
     def formfield_for_foreignkey(self, db_field: Any, request: Any, **options: Any) -> Any:
         """Offer the series of this station."""

@@ -139,7 +139,7 @@ def sheet_of(values: Mapping[str, Any], children: Mapping[str, Sequence[Any]]) -
     if station is None or arrived_at is None:
         return None
     columns = _on_their_day({name: values[name] for name in COLUMNS if name in values}, arrived_at)
-    rows = {
+    rows: dict[str, Any] = {
         name: tuple(
             _row(kind, _on_their_day(row, arrived_at))
             for row in children.get(name, ())

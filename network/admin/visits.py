@@ -116,7 +116,7 @@ class VisitAdmin(AtStation, LivePages, ServedAdmin):
         station = self.station_of_page(request)
         if station is None:
             return asked
-        sheet = answers.start_sheet(station, by=request.user, at=self._opened_at(request))  # type: ignore[arg-type]
+        sheet = answers.start_sheet(station, by=request.user, at=self._opened_at(request))
         return {
             "arrived_at": sheet.arrived_at,
             "party": [person.pk for person in sheet.party],
@@ -128,7 +128,7 @@ class VisitAdmin(AtStation, LivePages, ServedAdmin):
         """Let the children know the visit and when the form was opened."""
         self._opened_at(request)
         self.station_of_page(request, obj)
-        request.visit = obj  # type: ignore[attr-defined]
+        request.visit = obj
         return super().get_inline_instances(request, obj)
 
     def serve(self, request: HttpRequest, filled: Filled) -> models.Model:
@@ -187,5 +187,5 @@ class VisitAdmin(AtStation, LivePages, ServedAdmin):
     @staticmethod
     def _opened_at(request: HttpRequest) -> Any:
         if not hasattr(request, "opened_at"):
-            request.opened_at = timezone.now().replace(second=0, microsecond=0)  # type: ignore[attr-defined]
-        return request.opened_at  # type: ignore[attr-defined]
+            request.opened_at = timezone.now().replace(second=0, microsecond=0)
+        return request.opened_at

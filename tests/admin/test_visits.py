@@ -323,6 +323,7 @@ def test_a_visit_is_checked_and_reopened_with_a_reason(client, where):
     page = client.get(reverse("admin:network_visit_change", args=[visit.pk]))
     assert not page.context["editable"]
     assert "0.500 m" in page.content.decode()
+    assert "<p>P1</p>" in page.content.decode()
     client.post(verb["reopen"], {"reason": ""})
     visit.refresh_from_db()
     assert visit.state == "checked"
