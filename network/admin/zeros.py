@@ -29,15 +29,18 @@ class OfOwner(Tried, Stated):
         return station
 
     def formfield_for_foreignkey(self, db_field: Any, request: Any, **options: Any) -> Any:
-        """Name each owner with its station."""
+        """Name each owner with its station; offer those of the station the address names."""
         field = super().formfield_for_foreignkey(db_field, request, **options)
         field.queryset = field.queryset.select_related("station").order_by("station__code")
+        asked = request.GET.get("station", "")
+        if asked.isdecimal():
+            field.queryset = field.queryset.filter(station=asked)
         field.label_from_instance = _with_station
         return field
 
 
 def _with_station(owner: models.Model) -> str:
-    return f"{owner.station}: {owner}"  # type: ignore[attr-defined]
+    return f"{owner.station}: {owner}"
 
 
 @admin.register(PlateZero)

@@ -8,6 +8,7 @@ from network.models import (
     BenchmarkElevation,
     Deployment,
     Document,
+    Gauging,
     LevelCheck,
     OtherGauge,
     PlateZero,
@@ -48,11 +49,13 @@ class StationFile:
     drawing: Drawing | None
     other_gauges: Sequence[tuple[OtherGauge, float | None]]
     zeros: Sequence[PlateZero]
+    station_zeros: Sequence[StationZero]
     benchmarks: Sequence[BenchmarkElevation]
     recorders: Sequence[Recorder]
     rating: RatingPeriod | None
     visits: Sequence[Visit]
     level_checks: Sequence[LevelCheck]
+    gaugings: Sequence[Gauging]
     work_left: Sequence[WorkLeft]
     safety_items: Sequence[SafetyItem]
     survey: SiteSurvey | None
@@ -77,11 +80,15 @@ def station_file(station: Station, *, at: datetime) -> StationFile:
             (gauge, _zero_m(gauge, at)) for gauge in gauges.other_gauges_in_service(station, at)
         ],
         zeros=list(zeros.select_related("plate", "level_check").order_by("-effective_from")),
+        station_zeros=list(
+            StationZero.objects.standing().filter(station=station).order_by("-effective_from")
+        ),
         benchmarks=_benchmarks(station, at),
         recorders=[_recorder(row, at) for row in visits.recorders_standing(station, at)],
         rating=in_force.at(RatingPeriod.objects.filter(station=station), at),
         visits=list(Visit.objects.filter(station=station).prefetch_related("party")[:LATEST]),
         level_checks=list(checks.order_by("-levelled_at")[:LATEST]),
+        gaugings=list(Gauging.objects.filter(station=station).order_by("-started_at")[:LATEST]),
         work_left=visits.work_left(station),
         safety_items=list(station.safety_items.filter(removed_on__isnull=True)),
         survey=SiteSurvey.objects.filter(station=station).prefetch_related("criteria").first(),

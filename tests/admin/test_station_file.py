@@ -1,5 +1,7 @@
 """The station file shows what stands at a station, and from it the zero is set."""
 
+from datetime import timedelta
+
 import pytest
 from django.urls import reverse
 
@@ -33,7 +35,8 @@ def test_one_page_tells_what_stands_there(client, where):
     world.checked_levels(where)
     page = client.get(address(where)).content.decode()
     for part in ("Slippery ladder.", "Wade only where", "98.000 m NN", "BM", "100.000 m",
-                 '<svg class="plates"', ">P2</text>", "14 May 2024"):  # fmt: skip
+                 '<svg class="plates"', ">P2</text>", "14 May 2024", "station zero",
+                 "Set the zero of a plate"):  # fmt: skip
         assert part in page
     assert " style=" not in page
 
@@ -101,3 +104,26 @@ def test_a_plate_zero_is_added_and_withdrawn_through_its_page(client, where):
     withdraw = reverse("admin:network_platezero_withdraw", args=[row.pk])
     assert client.post(withdraw, {"reason": "typing error"}).status_code == 302
     assert not plate(where, "P1").zeros.last().stands
+
+
+def test_a_zero_set_from_the_file_offers_the_plates_of_that_station(client, where):
+    add = reverse("admin:network_platezero_add")
+    assert "TE-010" in client.get(add, {"station": where.pk}).content.decode()
+    assert "P1</option>" not in client.get(add, {"station": where.pk + 1}).content.decode()
+
+
+def test_a_plate_is_taken_down_as_an_act_but_not_before_it_was_read(client, where, manager):
+    client.force_login(manager)
+    world.read_twice(where, LEVELLED - timedelta(days=60))
+    row = plate(where, "P2")
+    remove = reverse("admin:network_staffplate_remove", args=[row.pk])
+    sent = {"removed_at_0": "2024-04-01", "removed_at_1": "12:00", "reason": "broken by ice"}
+    assert "was still read after that" in client.post(remove, sent).content.decode()
+    late = sent | {"removed_at_0": "2024-05-01"}
+    answered = client.post(remove, late)
+    if answered.status_code == 200:
+        late["seen"] = answered.context["differences"].fingerprint
+        answered = client.post(remove, late)
+    assert answered.status_code == 302
+    row.refresh_from_db()
+    assert row.removed_at is not None

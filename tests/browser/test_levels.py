@@ -46,11 +46,17 @@ def type_book(page, where):
             fill(page, f"sights-{number}-{name}", getattr(row, name))
 
 
+def await_reduction(page):
+    """Wait until no answer is on its way, so that none reaches the server after the test."""
+    page.wait_for_selector("[data-figure=misclosure]:has-text('−1.0 mm')")
+    page.wait_for_selector("#answer:not(.stale)")
+    page.wait_for_load_state("networkidle")
+
+
 def test_a_book_is_typed_reduced_checked_and_adopted(page, where, picture, fits_a_phone):
     world.read_twice(where, world.LEVELLED - timedelta(days=60))
     type_book(page, where)
-    page.wait_for_selector("[data-figure=misclosure]:has-text('−1.0 mm')")
-    page.wait_for_selector("#answer:not(.stale)")
+    await_reduction(page)
     picture(page, f"levels-typed-{page.device}")
     if page.device == "phone":
         fits_a_phone(page)
@@ -80,11 +86,12 @@ def test_a_book_is_typed_reduced_checked_and_adopted(page, where, picture, fits_
 
 def test_an_unfinished_book_comes_back_on_the_same_device(page, where):
     type_book(page, where)
-    page.wait_for_timeout(500)
+    await_reduction(page)
     page.goto(reverse("admin:index"))
     page.goto(f"{ADD}?station={where.pk}")
     page.wait_for_selector(".draft-notice.restored")
     assert page.input_value("#id_sights-7-foresight_m") == "1,301"
+    await_reduction(page)
 
 
 def test_the_station_file_is_read_before_going_there(page, where, picture, fits_a_phone):
