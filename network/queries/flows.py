@@ -123,12 +123,59 @@ def compute(inputs: StationInputs, raw: Mapping[int, Readings]) -> StationDays:
 
 
 def without_unrated_periods(record: Rated, inputs: StationInputs) -> Rated:
-    """Blank the flow where a note says that it is estimated or withheld."""
-    flow_m3s = record.flow_m3s.copy()
+    """Blank the flow where a note says that it is estimated or withheld.
+
+    A step of the record is split at either end of the note, so that nothing beside it is lost.
+    """
+    gap_limit_s = inputs.series.gap_limit_s if inputs.series else 0
     for note in inputs.notes:
         if note.flows != Note.Flows.STAND:
-            flow_m3s[_inside(record.times_s, note.start_s, note.end_s)] = np.nan
-    return replace(record, flow_m3s=flow_m3s)
+            record = _cut_out(record, note.start_s, note.end_s, gap_limit_s=gap_limit_s)
+    return record
+
+
+def _cut_out(record: Rated, start_s: int, end_s: int, *, gap_limit_s: int) -> Rated:
+    """Blank the flow for start_s ≤ t < end_s; the flow at both ends is interpolated."""
+    begin, stop = (int(at) for at in np.searchsorted(record.times_s, (start_s, end_s)))
+    inside = _part(record, slice(begin, stop))
+    before = _at_edge(record, start_s, begin, gap_limit_s=gap_limit_s)
+    after = _at_edge(record, end_s, stop, gap_limit_s=gap_limit_s)
+    return _joined(
+        _part(record, slice(0, begin)),
+        before,
+        *(_blank(part) for part in (before, inside, after)),
+        after,
+        _part(record, slice(stop, None)),
+    )
+
+
+def _at_edge(record: Rated, at_s: int, following: int, *, gap_limit_s: int) -> Rated:
+    """Interpolate a record inside a step that is bridged; nothing elsewhere."""
+    step = slice(following - 1, following + 1)
+    times_s = record.times_s[step] if following > 0 else record.times_s[:0]
+    if len(times_s) < 2 or times_s[1] - times_s[0] > gap_limit_s:
+        return _part(record, slice(0, 0))
+    stage_m, flow_m3s = (
+        np.interp([at_s], times_s, column[step]) for column in (record.stage_m, record.flow_m3s)
+    )
+    return Rated(np.array([at_s], np.int64), stage_m, flow_m3s, record.marks[step][:1])
+
+
+def _part(record: Rated, cut: slice) -> Rated:
+    return Rated(*(column[cut] for column in vars(record).values()))
+
+
+def _blank(record: Rated) -> Rated:
+    return replace(record, flow_m3s=np.full(len(record.flow_m3s), np.nan))
+
+
+def _joined(*parts: Rated) -> Rated:
+    return Rated(
+        *(
+            np.concatenate(columns)
+            for columns in zip(*(vars(p).values() for p in parts), strict=True)
+        )
+    )
 
 
 def with_infills(
@@ -222,10 +269,6 @@ def _gauging_ratios(inputs: StationInputs, open_water: Rated) -> tuple[Floats, F
     known = rated > 0
     days = (inputs.gauged_s[known] - inputs.edges_s[0]) / 86_400
     return days, inputs.gauged_m3s[known] / rated[known]
-
-
-def _inside(times_s: Seconds, start_s: int, end_s: int) -> Bools:
-    return (times_s >= start_s) & (times_s < end_s)
 
 
 def _withheld(marks: MarkBits) -> Bools:

@@ -235,3 +235,15 @@ def test_a_winter_ratio_scales_the_open_water_flow_by_the_gauging_under_ice(stea
     found = days(steady)
     assert found.flow_m3s[2:7].tolist() == [6.0, 1.5, 1.5, 1.5, 6.0]
     assert (found.marks[3:6] == Mark.ESTIMATED | Mark.ICE_OR_BACKWATER).all()
+
+
+def test_a_note_takes_nothing_from_the_day_beside_it(station, recorder, profile, keeper, approver):
+    # Six-hourly readings: the step from 18:00 to midnight belongs to 3 February all the same.
+    readings = [(START + n * 6 * HOUR, 2.0) for n in range(4 * 10 + 1)]
+    series.change_series(series=recorder, gap_limit_minutes=400, by=keeper, at=AT)
+    take(text_of(readings), series=recorder, profile=profile, by=keeper)
+    rate_linearly(station, keeper, approver, number="1", factor=3.0)
+    note(station, keeper, cause=Note.Cause.ICE, treatment=Note.Flows.ESTIMATED)
+    found = days(station)
+    assert found.flow_m3s[[2, 6]].tolist() == [6.0, 6.0]
+    assert found.covered_s[2:7].tolist() == [86_400, 0, 0, 0, 86_400]

@@ -1,6 +1,6 @@
 """Print the ratios of speed that this program means to hold, and write them to a file."""
 
-from itertools import chain
+from collections.abc import Iterator
 from pathlib import Path
 from typing import Any
 
@@ -9,8 +9,12 @@ from django.core.management.base import BaseCommand, CommandError, CommandParser
 from django.db import connection
 from django.db.utils import Error as DatabaseError
 
+from network.models import Station
 from reports import services
-from reports.management.benchmark import place, records
+from reports.management.benchmark import place, ratings, records, work
+from reports.management.benchmark.timing import Ratio
+
+SMALL_NETWORK = {"stations": 100, "instruments": 300, "visits": 5_000, "gaugings": 2_500}
 
 
 class Command(BaseCommand):
@@ -28,21 +32,26 @@ class Command(BaseCommand):
         """Measure; end well whatever the ratios are, those out of hold marked."""
         lines = [f"{connection.vendor}, {'quick look' if quick else 'medians of 7 runs'}"]
         self.stdout.write(lines[0])
-        runs, years, yearbooks = (3, 3, 12) if quick else (7, 30, 50)
         try:
-            printing = services.printer("management.benchmark.printing")
-            with place.throw_away() as folder:
-                measured = chain(
-                    records.ratios(folder, years=years, runs=runs),
-                    printing.ratios(folder, runs=2 if quick else runs, yearbooks=yearbooks),
-                )
-                for ratio in measured:
-                    lines.append(str(ratio))
-                    self.stdout.write(lines[-1])
-                    self.stdout.flush()
+            for ratio in _ratios(quick=quick):
+                lines.append(str(ratio))
+                self.stdout.write(lines[-1])
+                self.stdout.flush()
         except (DatabaseError, services.Refusal) as error:
             raise CommandError(str(error)) from error
         path = output or Path(settings.DATA_DIR) / "benchmark.txt"
         path.parent.mkdir(parents=True, exist_ok=True)
         path.write_text("\n".join(lines) + "\n", encoding="utf-8")
         self.stdout.write(f"Written to {path}.")
+
+
+def _ratios(*, quick: bool) -> Iterator[Ratio]:
+    """Measure one long record, its ratings and its yearbooks, then the work of a large network."""
+    runs, years, yearbooks = (3, 3, 12) if quick else (7, 30, 50)
+    printing = services.printer("management.benchmark.printing")
+    with place.throw_away() as folder:
+        yield from records.ratios(folder, years=years, runs=runs)
+        yield from ratings.ratios(Station.objects.get(), years=years, runs=runs)
+        yield from printing.ratios(folder, runs=2 if quick else runs, yearbooks=yearbooks)
+    with place.throw_away():
+        yield from work.ratios(runs=runs, **(SMALL_NETWORK if quick else {}))
