@@ -53,7 +53,7 @@ class SightForm(forms.ModelForm):
         cleaned = super().clean() or self.cleaned_data
         kind, _mark, key = str(cleaned.get("on", "")).partition(":")
         cleaned |= {"point": kind, "benchmark": None, "plate": None}
-        model = {"benchmark": Benchmark, "plate": StaffPlate}.get(kind)
+        model: Any = {"benchmark": Benchmark, "plate": StaffPlate}.get(kind)
         if model is not None:
             cleaned[kind] = model.objects.filter(pk=key).first()
         if not kind and self.has_changed():
@@ -100,8 +100,8 @@ def point_choices(station: Station) -> Choices:
     return [
         *((f"benchmark:{mark.pk}", mark.label) for mark in marks),
         *((f"plate:{plate.pk}", plate.label) for plate in plates),
-        (Sight.Point.TURNING.value, Sight.Point.TURNING.label),
-        (Sight.Point.WATER.value, Sight.Point.WATER.label),
+        (str(Sight.Point.TURNING), Sight.Point.TURNING.label),
+        (str(Sight.Point.WATER), Sight.Point.WATER.label),
         *((f"plate:{plate.pk}", _("%s (taken down)") % plate.label) for plate in gone),
     ]
 
@@ -123,11 +123,13 @@ def sheet_of(
         peg=PegRow(**{name: pegs[0][name] for name in PegRow.__dataclass_fields__})
         if pegs
         else None,
-        sights=tuple(
-            SightRow(**{name: row.get(name) for name in SightRow.__dataclass_fields__})
-            for _number, row in lines
-        ),
+        sights=tuple(_line(row) for _number, row in lines),
     )
+
+
+def _line(row: Mapping[str, Any]) -> SightRow:
+    values: dict[str, Any] = {name: row.get(name) for name in SightRow.__dataclass_fields__}
+    return SightRow(**values)
 
 
 def _is_whole(row: Mapping[str, Any]) -> bool:

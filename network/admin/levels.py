@@ -149,7 +149,7 @@ class LevelCheckAdmin(AtStation, LivePages, ServedAdmin):
             form_id=filled.form_id,
             sheet=sheet,
             version=filled.version if filled.row is not None else None,
-            by=request.user,  # type: ignore[arg-type]
+            by=request.user,
             at=timezone.now(),
         )
 

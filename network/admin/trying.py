@@ -40,7 +40,7 @@ def tried(
             station, act, touches_readings=touches_readings, look=look or dict
         )
         if look or not found.is_nothing:
-            request.differences = found  # type: ignore[attr-defined]
+            request.differences = found
             return None
         messages.info(request, _("No published figure and no gauging changed."))
         seen = found.fingerprint
@@ -55,7 +55,7 @@ def page(request: HttpRequest, **context: Any) -> HttpResponse:
         for value in values
         if name not in NOT_TYPED
     ]
-    found = request.differences  # type: ignore[attr-defined]
+    found = request.differences
     return TemplateResponse(
         request, "admin/before_and_after.html", {"differences": found, "typed": typed, **context}
     )

@@ -118,7 +118,7 @@ class VerbPages:
         context = self.admin_site.each_context(request)  # type: ignore[attr-defined]
         context |= {"title": capfirst(str(verb.label)), "subtitle": str(row), "opts": row._meta}
         if verb.compare is not None:
-            more = request.differences.more  # type: ignore[attr-defined]
+            more = request.differences.more
             context |= {"changes": verb.compare(more), "shown_by": verb.shown_by}
         return trying.page(request, **context)
 

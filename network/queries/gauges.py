@@ -41,9 +41,17 @@ class PlateThen:
 class Reading(Protocol):
     """Anything read from one gauge: stored at a visit or a gauging, or being typed."""
 
-    read_at: datetime
-    plate: StaffPlate | None
-    reading_m: float | None
+    @property
+    def read_at(self) -> datetime:
+        """When it was read."""
+
+    @property
+    def plate(self) -> StaffPlate | None:
+        """The plate, or none where another gauge was read."""
+
+    @property
+    def reading_m(self) -> float | None:
+        """The reading, none where there was none to take."""
 
 
 def station_zero(station: Station, instant: datetime) -> StationZero | None:

@@ -2,6 +2,7 @@
 
 from dataclasses import dataclass
 from datetime import datetime, timedelta
+from typing import Any
 
 from network.models import (
     Instrument,
@@ -28,7 +29,7 @@ class ReadingRow:
     read_at: datetime
     plate: StaffPlate | None = None
     other_gauge: OtherGauge | None = None
-    observation: str = VisitReading.Observation.READ.value
+    observation: str = str(VisitReading.Observation.READ)
     reading_m: float | None = None
     wave_m: float | None = None
     key: int | None = None
@@ -85,7 +86,7 @@ class VisitSheet:
     is_for_flood: bool = False
     weather: str = ""
     river: str = ""
-    control_condition: str = Visit.Control.CLEAR.value
+    control_condition: str = str(Visit.Control.CLEAR)
     instruments: tuple[Instrument, ...] = ()
     work_done: str = ""
     remarks: str = ""
@@ -133,6 +134,6 @@ def columns_of(row: object) -> dict[str, object]:
     return {name: value for name, value in vars(row).items() if name != "key"}
 
 
-def _row(kind: type, stored: object) -> object:
+def _row(kind: Any, stored: Any) -> Any:
     names = [name for name in kind.__annotations__ if name != "key"]
     return kind(key=stored.pk, **{name: getattr(stored, name) for name in names})

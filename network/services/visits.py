@@ -114,7 +114,7 @@ def _refuse_times(sheet: VisitSheet, *, at: datetime) -> None:
         field_books.refuse_future(sheet.departed_at, at=at, field="departed_at")
         if sheet.departed_at < sheet.arrived_at:
             raise Refusal(_("The party departs before it arrived."), field="departed_at")
-    rows = [("readings", "read_at", sheet.readings)]
+    rows: list[tuple[str, str, Sequence[Any]]] = [("readings", "read_at", sheet.readings)]
     rows += [("recorder_checks", "checked_at", sheet.recorder_checks)]
     for called, name, typed in rows:
         for number, row in enumerate(typed):

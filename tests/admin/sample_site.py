@@ -5,10 +5,11 @@ from django.utils.safestring import mark_safe
 
 from network.admin.acting import ServedAdmin
 from network.admin.children import ChildRows
+from network.admin.rounds import RoundAdmin
 from network.admin.site import StaffSite
 from network.admin.stations import StationAdmin
 from network.admin.verbs import Verb
-from network.models import Station, Visit, VisitReading
+from network.models import Round, Station, Visit, VisitReading
 from network.services.acts import Refusal, claim_version, open_act, required_reason
 
 
@@ -46,6 +47,7 @@ class ReadingRows(ChildRows):
 
 
 class VisitAdmin(ServedAdmin):
+    change_form_template = "admin/change_form.html"  # not the visit log's own
     fields = ("station", "arrived_at", "remarks")
     inlines = (ReadingRows,)
     verbs = (
@@ -75,5 +77,6 @@ class VisitAdmin(ServedAdmin):
 
 site = StaffSite(name="admin")
 site.register(Station, StationAdmin)
+site.register(Round, RoundAdmin)
 site.register(Visit, VisitAdmin)
 urlpatterns = [path("staff/", site.urls), path("", include("network.web.urls"))]
