@@ -82,7 +82,7 @@ def _moving_fields(station: Station, now: datetime) -> dict[str, forms.Field]:
     for series in station.series.all():
         fields[f"offset_{series.pk}"] = _optional(_("offset of series %s, m") % series, said)
     if station.is_rated:
-        versions = Curve.objects.filter(station=station, state=Curve.State.APPROVED).standing()  # type: ignore[attr-defined]
+        versions = Curve.objects.filter(station=station, state=Curve.State.APPROVED).standing()
         choices = [("", "–"), (NONE_IN_FORCE, _("none in force"))]
         choices += [(str(curve.pk), str(curve)) for curve in versions]
         fields["rating"] = forms.ChoiceField(
