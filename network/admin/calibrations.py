@@ -1,9 +1,10 @@
 """Calibrations: entered by tow runs or from a certificate, looked at, withdrawn."""
 
-from typing import Any
+from typing import Any, Literal
 
 from django import forms
 from django.contrib import admin
+from django.core.exceptions import ValidationError
 from django.db import models
 from django.http import HttpRequest, HttpResponse
 from django.utils import timezone
@@ -48,7 +49,14 @@ class CalibrationForm(StaffForm):
     def clean_runs(self) -> list[calibrations.Run]:
         """Read the runs line by line."""
         rows = numbers_of(self.cleaned_data["runs"], 3, _t("speed, revolutions and seconds"))
-        return [calibrations.Run(speed_ms=v, revolutions=r, seconds=s) for v, r, s in rows]
+        runs = [
+            calibrations.Run(speed_ms=v, revolutions=r, seconds=s)
+            for v, r, s in rows
+            if v is not None and r is not None and s is not None
+        ]
+        if len(runs) < len(rows):
+            raise ValidationError(_t("A tow run has a speed, revolutions and seconds."))
+        return runs
 
 
 class Pieces(ChildRows):
@@ -107,7 +115,7 @@ class CalibrationAdmin(ServedAdmin):
 
     def get_list_display(self, request: HttpRequest) -> list[Any]:
         """Write the standard error as the agency writes numbers."""
-        own = request.agency  # type: ignore[attr-defined]
+        own = request.agency
         return [
             *("__str__", "effective_from", "laboratory", "certificate_number", "source"),
             column("standard_error_ms", _("standard error, m/s"), fixed_writer(own, 4)),
@@ -139,7 +147,7 @@ class CalibrationAdmin(ServedAdmin):
             "at": timezone.now(),
         }
         if values["runs"]:
-            count = values["count"] or 1
+            count: Literal[1, 2, 3] = values["count"] or 1
             return calibrations.from_tow_runs(runs=values["runs"], pieces=count, **given)
         return calibrations.from_certificate(pieces=_pieces(filled.children["pieces"]), **given)
 

@@ -1,7 +1,7 @@
 """The form of a gauging sheet: heading, table, and what other methods note, read into a sheet."""
 
 import re
-from collections.abc import Callable, Mapping
+from collections.abc import Callable, Mapping, Sequence
 from datetime import datetime
 from types import SimpleNamespace
 from typing import Any
@@ -103,7 +103,7 @@ def read_lines(table: gauging_lines.FormTable, heading: Mapping[str, Any]) -> Ta
 def sheet_of(
     heading: Mapping[str, Any],
     table: Table,
-    children: Mapping[str, list[Mapping[str, Any]]],
+    children: Mapping[str, Sequence[Mapping[str, Any]]],
 ) -> FieldSheet:
     """Put a sheet together from cleaned values."""
     fields = {name: heading[name] for name in Heading.__dataclass_fields__ if name in heading}
@@ -200,7 +200,7 @@ def _typed_row(data: Mapping[str, Any], prefix: str, cells: tuple[str, ...]) -> 
 
 
 def _other(
-    heading: Mapping[str, Any], children: Mapping[str, list[Mapping[str, Any]]]
+    heading: Mapping[str, Any], children: Mapping[str, Sequence[Mapping[str, Any]]]
 ) -> field_sheets.Other | None:
     one = {name: SimpleNamespace(**rows[0]) for name, rows in children.items() if len(rows) == 1}
     method = heading.get("method")
@@ -224,13 +224,13 @@ def _other(
             put.mass_kg,
         )
     if method == Gauging.Method.WEIR and "weir_head" in one:
-        fields = field_sheets.Weir.__dataclass_fields__
         noted = children["weir_head"][0]
-        return field_sheets.Weir(**{name: noted.get(name) for name in fields})
+        sizes: dict[str, Any] = {n: noted.get(n) for n in field_sheets.Weir.__dataclass_fields__}
+        return field_sheets.Weir(**sizes)
     return None
 
 
-def _boat(rows: list[Mapping[str, Any]], track: Any) -> field_sheets.Boat | None:
+def _boat(rows: Sequence[Mapping[str, Any]], track: Any) -> field_sheets.Boat | None:
     if not rows and track is None:
         return None
     crossings = tuple(

@@ -230,7 +230,9 @@ def _stored(line: Line, number: int, write: Any) -> FormLine:
 
 def _line(line: FormLine) -> Line:
     """Read a line; a cell that cannot be read is noted and counts as blank."""
-    numbers = {name: _number(line, name, line.cells.get(name, "")) for name in NUMBERS}
+    numbers: dict[str, Any] = {
+        name: _number(line, name, line.cells.get(name, "")) for name in NUMBERS
+    }
     if line.is_edge:
         edge = line.edge if line.edge in Channel.Edge.values else Channel.Edge.SLOPING
         kept = {name: numbers[name] for name in ("distance_m", "depth_m", "velocity_ms")}

@@ -40,7 +40,7 @@ def signed_or_checked(row: Any) -> bool:
 
 
 def _preview(request: HttpRequest, row: Any, _form: forms.Form) -> str:
-    found = answers.of_stored(row, agency=request.agency)  # type: ignore[attr-defined]
+    found = answers.of_stored(row, agency=request.agency)
     context = shown_answer(found)
     return render_to_string("admin/network/gauging/_answer.html", context, request)
 
@@ -91,7 +91,7 @@ class GaugingAdmin(WorkbookPages, ServedAdmin):
 
     def get_list_display(self, request: HttpRequest) -> list[Any]:
         """Write the figures as the agency does."""
-        own = request.agency  # type: ignore[attr-defined]
+        own = request.agency
         return [
             *("station", "started_at", "method", "way"),
             column("signed_stage_m", _("stage, m"), fixed_writer(own, 3)),
@@ -191,7 +191,7 @@ class GaugingAdmin(WorkbookPages, ServedAdmin):
             self.has_add_permission(request) if new else self.has_change_permission(request, row)
         )
         if not context["editable"] and row is not None:
-            context |= stored_answer(row, agency=request.agency)  # type: ignore[attr-defined]
+            context |= stored_answer(row, agency=request.agency)
         elif form.is_bound or row is not None:
             context |= self._answered(request, row, form)
         return super().render_change_form(request, context, **options)
@@ -218,7 +218,7 @@ class GaugingAdmin(WorkbookPages, ServedAdmin):
         """Return what the page shows of the sheet as typed, or as stored."""
         if form.is_bound:
             return self._typed_answer(request, form.table, row)
-        found = answers.of_stored(row, agency=request.agency)  # type: ignore[attr-defined]
+        found = answers.of_stored(row, agency=request.agency)
         return shown_answer(found, gauging_form.read_lines(form.table, vars(row)), form.table)
 
     def _typed_answer(
@@ -232,7 +232,7 @@ class GaugingAdmin(WorkbookPages, ServedAdmin):
         leave_out = str(request.POST.get("gauging") or "")
         found = answers.answer(
             sheet,
-            agency=request.agency,  # type: ignore[attr-defined]
+            agency=request.agency,
             leave_out=int(leave_out) if leave_out.isdecimal() else getattr(row, "pk", None),
         )
         return shown_answer(found, table, lines)

@@ -2,11 +2,12 @@
 
 from collections.abc import Iterable, Sequence
 from dataclasses import dataclass, replace
+from datetime import datetime
 
 import numpy as np
 from django.db.models import prefetch_related_objects
 
-from network.models import Agency, Calibration, Gauging, WorkingRules
+from network.models import Agency, Calibration, Gauging, StaffPlate, WorkingRules
 from network.numerics import gauging as kernel
 from network.numerics.gauging_faults import BadSheet, Fault
 from network.numerics.gauging_findings import rating_deviation
@@ -17,6 +18,7 @@ from network.numerics.gauging_input import (
     Sheet,
     StageReading,
 )
+from network.numerics.gauging_result import Gauging as GaugingResult
 from network.numerics.gauging_result import Preview
 from network.numerics.mean_stage import MeanStage, mean_stage
 from network.numerics.other_methods import OtherGauging
@@ -55,7 +57,7 @@ class Answer:
     wading_limit_m2s: float = 0.9
 
     @property
-    def result(self) -> kernel.Gauging | None:
+    def result(self) -> GaugingResult | None:
         """The kernel's result of a velocity-area gauging."""
         return self.preview.result if self.preview else None
 
@@ -224,7 +226,7 @@ def _plain_stage(
     )
 
 
-def _stated_cases(result: kernel.Gauging) -> Iterable[Finding]:
+def _stated_cases(result: GaugingResult) -> Iterable[Finding]:
     """Name the cases in which an agency value stands for a table of the standard."""
     for case in result.uncertainty.agency_values:
         said = sentence(STATED, case=case)
@@ -275,7 +277,7 @@ def _stored_stage_m(
     ).stage_m
 
 
-def _zero_m(plate: object, at: object) -> float | None:
+def _zero_m(plate: StaffPlate, at: datetime) -> float | None:
     """Return a plate's zero at an instant from its rows already read."""
     standing = [row for row in plate.zeros.all() if row.stands and row.effective_from <= at]
     return max(standing, key=lambda row: row.effective_from).zero_m if standing else None

@@ -10,6 +10,7 @@ from network.numerics.other_methods import OtherGauging
 from network.numerics.sentences import gettext_noop, sentence
 from network.numerics.vertical_findings import Finding
 from network.numerics.weirs import RectangularNotch, VNotch
+from network.numerics.weirs import Weir as Notch
 from network.queries.field_sheets import Boat, FieldSheet, Fills, Floats, Tracer, Weir
 
 STATED = gettext_noop("stated with the result")
@@ -48,7 +49,7 @@ def _stated(
     if u95_percent is None or not 0 < u95_percent < np.inf:
         text = gettext_noop("State the uncertainty of the result in %, above 0.")
         faults.append(Fault("stated_u95_percent", sentence(text)))
-    if faults:
+    if flow_m3s is None or u95_percent is None or faults:
         raise BadSheet(tuple(faults))
     return OtherGauging(method, flow_m3s, ((STATED, u95_percent / 2),), (), findings, (STATED,))
 
@@ -61,17 +62,18 @@ def _weir(weir: Weir, u95_percent: float | None) -> OtherGauging:
     ]
     if missing:
         raise BadSheet(tuple(missing))
+    head_m, crest_m, channel_m, opening = (float(getattr(weir, n)) for n in _sizes_of(weir))
     try:
-        notch = (
-            VNotch(weir.angle_deg, weir.crest_height_m, weir.channel_width_m)
+        notch: Notch = (
+            VNotch(opening, crest_m, channel_m)
             if weir.shape == "v"
-            else RectangularNotch(weir.notch_width_m, weir.crest_height_m, weir.channel_width_m)
+            else RectangularNotch(opening, crest_m, channel_m)
         )
     except ValueError as error:
         text = gettext_noop("These are no sizes of a weir: {error}")
         raise BadSheet((Fault("shape", sentence(text, error=str(error))),)) from error
-    flow_m3s = float(notch.flow_m3s(np.array([weir.head_m]))[0])
-    limits = notch.findings(lowest_head_m=weir.head_m, highest_head_m=weir.head_m)
+    flow_m3s = float(notch.flow_m3s(np.array([head_m]))[0])
+    limits = notch.findings(lowest_head_m=head_m, highest_head_m=head_m)
     findings = tuple(Finding("weir", "head_m", f.what, f.limit, f.source) for f in limits)
     return _stated(flow_m3s, u95_percent, "weir", findings)
 

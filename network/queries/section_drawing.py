@@ -1,7 +1,9 @@
 """The drawing of a gauged section: water, bed, ice, verticals, and what each panel carries."""
 
+from collections.abc import Callable
 from dataclasses import dataclass
 
+from network.numerics.gauging_input import Channel
 from network.queries.gaugings import Answer
 
 WIDTH, HEIGHT = 400.0, 250.0
@@ -98,7 +100,7 @@ def drawing(answer: Answer, *, advice: float = 5.0, limit: float = 10.0) -> Draw
     )
 
 
-def _nodes(channel: object) -> list[tuple[float, float, float]]:
+def _nodes(channel: Channel) -> list[tuple[float, float, float]]:
     """List distance, depth and underside of ice from bank to bank, as far as noted."""
     first, last = channel.first_bank, channel.last_bank
     rows = [
@@ -115,7 +117,7 @@ def _polygon(bottom: list[tuple[float, float]]) -> str:
 
 
 def _bars(
-    answer: Answer, x: object, *, advice: float, limit: float
+    answer: Answer, x: Callable[[float], float], *, advice: float, limit: float
 ) -> tuple[tuple[Bar, ...], tuple[Level, ...]]:
     panels = answer.result.panels if answer.result else ()
     if not panels:

@@ -3,7 +3,7 @@
 from collections.abc import Sequence
 from dataclasses import replace
 from datetime import date, datetime, time, timedelta
-from typing import IO
+from typing import IO, Any
 from uuid import UUID
 
 from django.utils import timezone
@@ -82,7 +82,7 @@ def load(stream: IO[bytes], *, by: Person, at: datetime) -> Gauging:
     )
 
 
-def _tables(sheet: FieldSheet) -> dict[str, object]:
+def _tables(sheet: FieldSheet) -> dict[str, Any]:
     settings = settings_of(clock.agency(), rules())
     heading = sheet.heading
     found = calibrations.in_force(heading.pair, heading.mid_time) if heading.pair else None

@@ -5,10 +5,12 @@ from datetime import datetime
 from uuid import UUID
 
 from django.utils.translation import gettext as _
+from simple_history.utils import bulk_update_with_history
 
 from network.models import Gauging, GaugingFinding, Infill, Person, Vertical
 from network.numerics.gauging_faults import Fault
 from network.numerics.sentences import Sentence
+from network.numerics.vertical_findings import Finding
 from network.queries import clock, field_sheets, gaugings
 from network.queries.field_sheets import FieldSheet
 from network.queries.gaugings import Answer
@@ -157,7 +159,7 @@ def said(sentence: Sentence) -> str:
     return _(sentence.text).format(**values)
 
 
-def path_of(fault: Fault) -> str:
+def path_of(fault: Fault | Finding) -> str:
     """Name the cell of a fault: channel.vertical.point.field, counted from 0, as far as known."""
     places = (fault.channel, fault.vertical, fault.point, fault.row)
     return ".".join([*(str(place) for place in places if place is not None), fault.field])
@@ -214,13 +216,17 @@ def _store_panels(row: Gauging, found: Answer) -> None:
         for vertical in channel.verticals.all()
     }
     velocities = {(v.channel, v.vertical): v.velocity_ms for v in result.verticals}
+    changed = []
     for panel in result.mid_panels:
-        place = (panel.channel, panel.vertical)
-        vertical = places[place]
-        vertical.mean_velocity_ms = velocities[place]
+        if panel.vertical is None:
+            continue
+        vertical = places[panel.channel, panel.vertical]
+        vertical.mean_velocity_ms = velocities[panel.channel, panel.vertical]
         vertical.panel_flow_m3s = panel.flow_m3s
         vertical.panel_share_percent = 100 * panel.share
-        vertical.save()
+        changed.append(vertical)
+    fields = ["mean_velocity_ms", "panel_flow_m3s", "panel_share_percent"]
+    bulk_update_with_history(changed, Vertical, fields)
 
 
 def _store_findings(row: Gauging, found: Answer) -> None:

@@ -1,5 +1,8 @@
 """Write a field sheet into the rows of its gauging, replacing what stood there."""
 
+from collections.abc import Callable
+from typing import Any
+
 from simple_history.utils import bulk_create_with_history
 
 import network.models as models
@@ -129,7 +132,7 @@ def _write_weir(gauging: Gauging, weir: Weir) -> None:
     models.WeirHead.objects.create(gauging=gauging, **vars(weir))
 
 
-WRITERS = {
+WRITERS: dict[type, Callable[[Gauging, Any], None]] = {
     Boat: _write_boat,
     Floats: _write_floats,
     Fills: _write_fills,

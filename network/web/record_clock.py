@@ -18,6 +18,6 @@ class RecordClockMiddleware:
         self.get_response = get_response
 
     def __call__(self, request: HttpRequest) -> HttpResponse:
-        request.agency = clock.agency()  # type: ignore[attr-defined]
-        with timezone.override(clock.record_clock(request.agency)):  # type: ignore[attr-defined]
+        request.agency = clock.agency()
+        with timezone.override(clock.record_clock(request.agency)):
             return self.get_response(request)
