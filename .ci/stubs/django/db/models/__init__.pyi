@@ -1,8 +1,8 @@
 # Choices are enumerations of text: without this their members would be taken for pairs.
-from enum import Enum
+from enum import StrEnum
 from typing import Any, ClassVar
 
-class TextChoices(str, Enum):  # type: ignore[misc]
+class TextChoices(StrEnum):  # type: ignore[misc]
     choices: ClassVar[list[tuple[str, str]]]
     labels: ClassVar[list[str]]
     values: ClassVar[list[str]]
