@@ -11,7 +11,7 @@ from django.db.utils import Error as DatabaseError
 
 from network.models import Station
 from reports import services
-from reports.management.benchmark import place, ratings, records, work
+from reports.management.benchmark import place, ratings, records, sections, work
 from reports.management.benchmark.timing import Ratio
 
 SMALL_NETWORK = {"stations": 100, "instruments": 300, "visits": 5_000, "gaugings": 2_500}
@@ -48,6 +48,7 @@ class Command(BaseCommand):
 def _ratios(*, quick: bool) -> Iterator[Ratio]:
     """Measure one long record, its ratings and its yearbooks, then the work of a large network."""
     runs, years, yearbooks = (3, 3, 12) if quick else (7, 30, 50)
+    yield from sections.ratios(runs=runs)
     printing = services.printer("management.benchmark.printing")
     with place.throw_away() as folder:
         yield from records.ratios(folder, years=years, runs=runs)
