@@ -98,7 +98,7 @@ def ratios(folder: Path, *, years: int, runs: int) -> Iterator[Ratio]:
     yield from _against_rows(whole, runs=runs)
     yield from _bytes(whole)
     rows.drop()
-    yield _import(folder, station, years=min(years, 5), runs=runs)
+    yield _import(folder, station, years=years, runs=runs)
 
 
 def _kernel(one: Record, *, runs: int, hold: float) -> Iterator[Ratio]:
