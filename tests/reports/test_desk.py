@@ -83,7 +83,6 @@ def test_others_look_and_cannot_act(client, compiled, office, role):
     assert response.status_code == 200
     file = client.get(reverse("admin:reports_edition_pdf", args=[compiled.pk]))
     assert b"".join(file.streaming_content).startswith(b"%PDF")
-    file.close()
     for name, args in (
         ("admin:reports_edition_compile", []),
         ("admin:reports_edition_issue", [compiled.pk]),
