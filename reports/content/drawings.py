@@ -9,7 +9,7 @@ from network.models import Curve, Station, VisitReading
 from network.numerics.duration import duration_curve
 from network.numerics.earlier_years import day_bands
 from network.numerics.marks import Mark
-from network.queries import curves
+from network.queries import curves, gauges
 from reports.content.daily_table import earlier_label
 from reports.content.field_work import Gauged, gauged
 from reports.content.particulars import plates_of_year, rating_label, rating_rows
@@ -94,14 +94,13 @@ def _staff_readings(data: YearData) -> tuple[list[datetime], list[float]]:
         read_at__gte=data.start,
         read_at__lt=data.end,
     )
-    instants, stages = [], []
-    for row in rows.select_related("plate").prefetch_related("plate__zeros").order_by("read_at"):
-        begun = [z for z in row.plate.zeros.all() if z.stands and z.effective_from <= row.read_at]
-        latest = max(begun, key=lambda zero: zero.effective_from, default=None)
-        if latest is not None and latest.zero_m is not None:
-            instants.append(row.read_at)
-            stages.append(row.reading_m + latest.zero_m)
-    return instants, stages
+    readings = list(rows.select_related("plate").order_by("read_at"))
+    known = [
+        (reading.read_at, stage)
+        for reading, stage in zip(readings, gauges.stages_m(readings), strict=True)
+        if stage is not None
+    ]
+    return [instant for instant, _stage in known], [stage for _instant, stage in known]
 
 
 def _duration(data: YearData) -> inputs.DurationCurves | None:

@@ -18,7 +18,7 @@ from network.models import (
     StationZero,
     Visit,
 )
-from network.queries import blocks, in_force
+from network.queries import blocks, gauges, in_force
 from reports import particulars as p
 from reports.content.printer import Printer
 from reports.content.year_data import YearData
@@ -226,7 +226,7 @@ def visits(data: YearData) -> tuple[p.Visit, ...]:
     rows = Visit.objects.filter(
         station=data.station, arrived_at__gte=data.start, arrived_at__lt=data.end
     )
-    rows = rows.prefetch_related("party", "readings__plate__zeros").order_by("arrived_at")
+    rows = rows.prefetch_related("party", "readings__plate").order_by("arrived_at")
     return tuple(
         p.Visit(
             arrived=row.arrived_at,
@@ -251,14 +251,8 @@ def people(rows: Iterable[Any]) -> str:
 
 def _stage_of_visit(row: Visit) -> float | None:
     """Return the stage of the first plate reading, by the plate zero then in force."""
-    for reading in row.readings.all():
-        if reading.plate is not None and reading.reading_m is not None:
-            zeros = [z for z in reading.plate.zeros.all() if z.stands]
-            begun = [z for z in zeros if z.effective_from <= reading.read_at]
-            latest = max(begun, key=lambda z: z.effective_from, default=None)
-            if latest is not None and latest.zero_m is not None:
-                return reading.reading_m + latest.zero_m
-    return None
+    stages = gauges.stages_m([r for r in row.readings.all() if r.plate is not None])
+    return next((stage for stage in stages if stage is not None), None)
 
 
 def corrections(data: YearData) -> tuple[p.Correction, ...]:
