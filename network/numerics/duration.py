@@ -3,7 +3,6 @@
 from dataclasses import dataclass
 
 import numpy as np
-from scipy.stats import rankdata
 
 from network.numerics.arrays import Floats
 
@@ -28,8 +27,10 @@ def duration_curve(values: Floats) -> DurationCurve:
     Source: Weibull plotting position, common practice.
     """
     falling = np.sort(values[~np.isnan(values)])[::-1]
+    _, place, ties = np.unique(-falling, return_inverse=True, return_counts=True)
+    rank = (np.cumsum(ties) - (ties - 1) / 2)[place]
     # P = m / (N + 1)
-    return DurationCurve(falling, rankdata(-falling) / (len(falling) + 1))
+    return DurationCurve(falling, rank / (len(falling) + 1))
 
 
 def exceeded(curve: DurationCurve, percents: Floats) -> Floats:

@@ -5,8 +5,7 @@ from dataclasses import dataclass
 from itertools import pairwise
 
 import numpy as np
-from scipy.stats import norm
-from scipy.stats import t as student_t
+from scipy.special import ndtr, ndtri, stdtrit
 
 from network.numerics.arrays import Floats, Indices
 from network.numerics.curves import Segment, SegmentCurve
@@ -31,7 +30,7 @@ class LineSums:
     @property
     def t_95(self) -> float:
         """Student's t for 95 %, two-sided, at N − p."""
-        return float(student_t.ppf(0.975, self.degrees_of_freedom))
+        return float(stdtrit(self.degrees_of_freedom, 0.975))
 
     def covariance(self, x1: Floats, x2: Floats) -> Floats:
         """Give the covariance of ln Q between x1 and x2, which broadcast."""
@@ -246,6 +245,6 @@ def _bias_corrected(rows: Floats, estimate: float) -> Interval:
     """
     share = np.clip(np.mean(rows < estimate), 0.5 / len(rows), 1 - 0.5 / len(rows))
     # z₀ = Φ⁻¹(share of draws below the estimate), percentiles at Φ(2·z₀ ± 1.96)
-    levels = norm.cdf(2 * norm.ppf(share) + norm.ppf([0.025, 0.975]))
+    levels = ndtr(2 * ndtri(share) + ndtri([0.025, 0.975]))
     low, high = np.quantile(rows, levels)
     return (float(low), float(high))

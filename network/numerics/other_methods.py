@@ -5,7 +5,7 @@ from collections.abc import Iterator, Sequence
 from dataclasses import dataclass
 
 import numpy as np
-from scipy.stats import t as student_t
+from scipy.special import stdtrit
 
 from network.numerics.gauging_faults import BadSheet, Fault
 from network.numerics.sentences import gettext_noop, sentence
@@ -64,7 +64,7 @@ def repeats_percent(repeats: Sequence[float], agency_percent: float) -> float:
     if n < FEW_REPEATS:
         return max(s_percent, agency_percent) / math.sqrt(n)
     # u = t₀.₉₇₅(n − 1)/2 · s/√n
-    return float(student_t.ppf(0.975, n - 1)) / 2 * s_percent / math.sqrt(n)
+    return float(stdtrit(n - 1, 0.975)) / 2 * s_percent / math.sqrt(n)
 
 
 def positive(rows: Sequence[float | None], field: str, text: str) -> Iterator[Fault]:

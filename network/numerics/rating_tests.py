@@ -8,8 +8,7 @@ from dataclasses import dataclass
 from typing import Literal
 
 import numpy as np
-from scipy.stats import binomtest
-from scipy.stats import t as student_t
+from scipy.special import bdtr, stdtr
 
 from network.numerics.arrays import Bools, Floats
 from network.numerics.sentences import Sentence, gettext_noop, sentence
@@ -44,7 +43,7 @@ def sign_test(deviations: Floats) -> TestResult:
     """
     above = _signs(deviations)
     n, k = len(above), int(above.sum())
-    p = float(binomtest(k, n).pvalue) if n else 1.0
+    p = _even_chance(k, n)
     if p >= SIGNIFICANT:
         text = gettext_noop("{most} of {n} on one side: no sign that the curve lies off.")
     elif k > n - k:
@@ -64,7 +63,7 @@ def sign_change_test(stage_m: Floats, deviations: Floats) -> TestResult:
     above = _signs(deviations[order])
     n = len(above)
     changes = int((above[1:] != above[:-1]).sum())
-    p = float(binomtest(changes, n - 1).pvalue) if n > 1 else 1.0
+    p = _even_chance(changes, n - 1)
     if p >= SIGNIFICANT:
         text = gettext_noop("{changes} changes of side in {n} gaugings: as chance would have it.")
     elif changes < (n - 1) / 2:
@@ -91,7 +90,7 @@ def bias_test(deviations_percent: Floats) -> TestResult:
     p = 1.0
     if spread > 0:
         # t = |mean| / (s/√N)
-        p = float(2 * student_t.sf(abs(mean) / (spread / np.sqrt(n)), n - 1))
+        p = float(2 * stdtr(n - 1, -abs(mean) / (spread / np.sqrt(n))))
     elif n > 1 and mean:
         p = 0.0
     if p >= SIGNIFICANT:
@@ -129,3 +128,9 @@ def _signs(deviations: Floats) -> Bools:
     """Say which lie above the curve, those exactly on it and NaN left out."""
     above: Bools = deviations[~np.isnan(deviations) & (deviations != 0)] > 0
     return above
+
+
+def _even_chance(count: int, of: int) -> float:
+    """Give the exact two-sided p-value of a count where each of so many falls either way evenly."""
+    # p = 2·P(X ≤ the smaller side), X binomial with ½
+    return min(1.0, 2 * float(bdtr(min(count, of - count), of, 0.5))) if of > 0 else 1.0
