@@ -1,7 +1,9 @@
 """A logger's file → instants, stages and a list of the rows that could not be read."""
 
 import io
+from collections import deque
 from collections.abc import Iterator
+from concurrent.futures import Future, ThreadPoolExecutor
 from dataclasses import dataclass
 from itertools import chain
 from typing import BinaryIO
@@ -16,6 +18,7 @@ from network.formats.logger_rows import Rows, read_rows
 from network.formats.text_encoding import Progress, TextBlock, TextReader
 
 MAX_BYTES = 200_000_000
+PARSERS = 2  # threads; the parser leaves the interpreter free most of the time
 
 
 @dataclass(frozen=True)
@@ -52,19 +55,33 @@ def read(
     Raises FileFault, with a sentence: nothing of the file can be used, or more than half cannot.
     """
     reader = TextReader(stream, encoding=profile.encoding, max_bytes=max_bytes, progress=progress)
-    header, blocks = _after_header(iter(reader), profile.header_lines)
-    layout = None
-    parts: list[Rows] = []
-    for block in blocks:
-        if layout is None and (first_row := _first_row(block)):
-            layout = lay_out(profile, names_line=header, first_row=first_row)
-        if layout:
-            parts.extend(read_rows(block, layout))
+    layout, parts = _parsed(iter(reader), profile)
     if layout is None:
         raise FileFault(_("The file has a header but no rows."))
     if not any(len(part.times_s) or part.faults for part in parts):
         raise FileFault(_("Every row of the file is marked as missing."))
     return _assemble(parts, reader=reader, layout=layout)
+
+
+def _parsed(blocks: Iterator[TextBlock], profile: Profile) -> tuple[Layout | None, list[Rows]]:
+    """Lay the columns out by the first row and parse block by block; no layout where no row is.
+
+    The next blocks are read and hashed while those before are parsed.
+    """
+    header, blocks = _after_header(blocks, profile.header_lines)
+    layout, parts = None, list[Rows]()
+    parsing = deque[Future[list[Rows]]]()
+    with ThreadPoolExecutor(PARSERS) as pool:
+        for block in blocks:
+            if layout is None and (first_row := _first_row(block)):
+                layout = lay_out(profile, names_line=header, first_row=first_row)
+            if layout:
+                parsing.append(pool.submit(read_rows, block, layout))
+            if len(parsing) > PARSERS:
+                parts += parsing.popleft().result()
+        for parsed in parsing:
+            parts += parsed.result()
+    return layout, parts
 
 
 def _after_header(

@@ -47,16 +47,14 @@ class Rows:
     rows_missing: int
 
 
-def read_rows(block: TextBlock, layout: Layout) -> Iterator[Rows]:
+def read_rows(block: TextBlock, layout: Layout) -> list[Rows]:
     """Read one block by the C parser, smaller pieces where it stumbles, and those line by line."""
     columns = _columns(block, layout)
     if columns is not None:
-        yield _checked(columns, block=block, layout=layout)
-    elif block.line_count <= PIECE_LINES:
-        yield _line_by_line(_lines(block, range(block.line_count)), layout)
-    else:
-        for piece in _pieces(block):
-            yield from read_rows(piece, layout)
+        return [_checked(columns, block=block, layout=layout)]
+    if block.line_count <= PIECE_LINES:
+        return [_line_by_line(_lines(block, range(block.line_count)), layout)]
+    return [rows for piece in _pieces(block) for rows in read_rows(piece, layout)]
 
 
 def _pieces(block: TextBlock) -> Iterator[TextBlock]:
