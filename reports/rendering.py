@@ -7,9 +7,11 @@ import threading
 from collections.abc import Callable
 from dataclasses import dataclass
 from datetime import UTC, datetime
+from io import BytesIO
 from pathlib import Path
 from typing import Any
 
+import pikepdf
 import weasyprint
 from django.contrib.staticfiles import finders
 from django.template.loader import render_to_string
@@ -134,7 +136,7 @@ def write_pdf(page: Page, *, identity: str, **options: Any) -> bytes:
     with _one_at_a_time:
         sheets, fonts = stylesheets()
         document = weasyprint.HTML(string=page.html, url_fetcher=OwnFetcher(page.figures))
-        return document.write_pdf(
+        pdf = document.write_pdf(
             stylesheets=sheets,
             font_config=fonts,
             pdf_variant="pdf/ua-1",
@@ -142,6 +144,21 @@ def write_pdf(page: Page, *, identity: str, **options: Any) -> bytes:
             finisher=add_scopes,
             **options,
         )
+    return _quick_to_open(pdf)
+
+
+def _quick_to_open(pdf: bytes) -> bytes:
+    """Write a PDF anew in object streams of a hundred.
+
+    WeasyPrint packs all into one, which must be read whole before the first page: a volume of 200
+    would open each of its parts for fifteen times as long.
+    """
+    written = BytesIO()
+    with pikepdf.open(BytesIO(pdf)) as document:
+        document.save(
+            written, deterministic_id=True, object_stream_mode=pikepdf.ObjectStreamMode.generate
+        )
+    return written.getvalue()
 
 
 def attachment_name(book: Yearbook) -> str:
