@@ -19,6 +19,7 @@ from network.numerics.marks import Mark
 from network.queries import clock, readiness, station_years
 from network.services.acts import Refusal, open_act, required_reason
 from network.services.jobs import Report, ask_for, kind
+from network.services.station_years import refresh
 from reports import editions, particulars
 from reports.content import book
 from reports.models import Edition, Volume
@@ -245,6 +246,7 @@ def _open_points(station: Station, year: int) -> list[str]:
 def _write_files(edition: Edition, year: int, progress: Report = _no_progress) -> None:
     """Compile content, PDF and data and name them by their hashes."""
     progress(0, 2)
+    refresh(edition.station)  # earlier years print beside this one; each is computed once
     try:
         content, values = book.compile_book(
             edition.station, year, edition=_particulars(edition), language=edition.language

@@ -5,7 +5,8 @@ from pathlib import Path
 
 import pytest
 
-from network.models import Act, Job
+from network.models import Act, Job, StationYear
+from network.queries import station_years
 from network.services import jobs, notes, trial, typed_flows
 from network.services.acts import Refusal
 from reports import editions, rendering, services
@@ -70,6 +71,12 @@ def test_a_compiled_edition_keeps_its_files_under_their_hashes(compiled):
     assert compiled.days_given == 365
     assert compiled.open_points == "The record has never been reviewed."
     assert Act.objects.filter(verb__contains="compiled").count() == 1
+
+
+def test_compiling_keeps_the_days_of_every_year_it_prints_beside(compiled, station):
+    kept = StationYear.objects.filter(station=station).values_list("first_day", flat=True)
+    assert compiled.first_day in kept
+    assert len(kept) == len(station_years.years_on_record(station))
 
 
 def test_compiling_again_replaces_what_was_never_issued(compiled, station, publisher):

@@ -14,6 +14,7 @@ import weasyprint
 from weasyprint.text.fonts import FontConfiguration
 
 from network.models import Agency, Station
+from network.services.station_years import refresh
 from reports import particulars, rendering, volumes
 from reports.content import book
 from reports.management.benchmark.records import LAST_YEAR
@@ -28,6 +29,7 @@ def ratios(folder: Path, *, runs: int, yearbooks: int) -> Iterator[Ratio]:
     """Measure print on the one station of the database."""
     station = Station.objects.get()
     edition = particulars.Edition(number=1, compiled_on=date(2025, 1, 1))
+    refresh(station)
 
     def whole() -> bytes:
         content, values = book.compile_book(station, LAST_YEAR, edition=edition)
