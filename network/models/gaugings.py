@@ -119,7 +119,7 @@ class Gauging(Recorded, Versioned):
                 condition=Q(checked_by__isnull=True),
                 name="network_gauging_unchecked",
             ),
-            models.Index(fields=["pair", "started_at"], name="network_gauging_by_pair"),
+            models.Index(fields=["pair", "started_at", "ended_at"], name="network_gauging_by_pair"),
         ]
         constraints = [
             models.CheckConstraint(

@@ -251,6 +251,13 @@ class RecordReview(Recorded, Withdrawable):
         verbose_name_plural = _("reviews of records")
         ordering = ["-reviewed_through"]
         constraints = [*Withdrawable.Meta.constraints]
+        indexes = [
+            models.Index(
+                fields=["station", "-reviewed_through"],
+                condition=Q(withdrawn_at__isnull=True),
+                name="network_review_latest",
+            )
+        ]
 
     def __str__(self) -> str:
         return f"{self.station} {self.reviewed_through}"

@@ -65,7 +65,9 @@ class Visit(Recorded, Versioned):
         verbose_name_plural = _("visits")
         ordering = ["-arrived_at"]
         indexes = [
-            models.Index(fields=["station", "-arrived_at"], name="network_visit_latest"),
+            models.Index(
+                fields=["station", "-arrived_at", "is_routine"], name="network_visit_latest"
+            ),
             models.Index(
                 fields=["station", "arrived_at"],
                 condition=Q(checked_by__isnull=True),

@@ -1,9 +1,10 @@
 """When something done every so often is due again: calendar months, and parts of a year."""
 
 from calendar import isleap
-from datetime import date, timedelta
+from datetime import date
 
 DAYS_PER_YEAR = 365.25
+SHORTEST_MONTH_DAYS = 28
 MONTH_DAYS = (31, 28, 31, 30, 31, 30, 31, 31, 30, 31, 30, 31)
 
 
@@ -25,8 +26,8 @@ def whole_months(start: date, end: date) -> int:
     return max(months, 0)
 
 
-def times_a_year(day: date, times: int) -> date:
-    """Return when the next of several evenly spread times a year falls due after a day."""
-    if times < 1:
+def days_between(times_a_year: int) -> int:
+    """Return the days from one to the next of several evenly spread times a year."""
+    if times_a_year < 1:
         raise ValueError("Something done in a year is done at least once.")
-    return day + timedelta(days=round(DAYS_PER_YEAR / times))
+    return round(DAYS_PER_YEAR / times_a_year)

@@ -138,11 +138,8 @@ def _wanted(row: StationRow, asked: Asked) -> int:
 
 
 def _unreviewed(row: StationRow, asked: Asked) -> int | None:
-    begun = row.reviewed_through or row.first_reading_on
-    last = row.last_reading_on
-    if begun is None or last is None or (row.reviewed_through and row.reviewed_through >= last):
-        return None
-    return (asked.today - begun).days
+    begun = row.unreviewed_since
+    return None if begun is None else asked.today.toordinal() - begun
 
 
 def _days_run(period: Period) -> dict[int, int]:

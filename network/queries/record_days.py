@@ -1,31 +1,72 @@
 """Days and hours found by the database itself, so that lists of thousands stay quick."""
 
+from datetime import date
 from typing import Any
 
-from django.db.models import DateField, FloatField, Func
+from django.db.models import Field, FloatField, Func
 from django.db.models.expressions import Combinable
 
 from network.models import Agency
 
 
-class RecordDay(Func):
-    """The record day of an expression of instants; see queries.clock.record_day."""
+class AsFound(Field):
+    """A whole number taken as the database gives it: to convert thousands takes longer than to
+    find them.
+    """
 
-    output_field = DateField()
+
+class RecordDay(Func):
+    """The record day of an expression of instants, as a number; `day` makes a date of it.
+
+    See queries.clock.record_day.
+    """
+
+    output_field = AsFound()
 
     def __init__(self, instant: Combinable | str, *, of: Agency) -> None:
         ahead = of.record_utc_offset_minutes - 60 * of.day_starts_at_hour
         super().__init__(instant, ahead=ahead)
 
     def as_sqlite(self, compiler: Any, connection: Any, **context: Any) -> Any:
-        """Write it for SQLite, which keeps instants as text in UTC."""
-        template = "date(%(expressions)s, '%(ahead)d minutes')"
+        """Write it for SQLite, which keeps instants as text in UTC; 1721424.5 ends before day 1."""
+        day = "julianday(%(expressions)s, '%(ahead)d minutes', 'start of day')"
+        template = f"CAST({day} - 1721424.5 AS integer)"
         return self.as_sql(compiler, connection, template=template, **context)
 
     def as_postgresql(self, compiler: Any, connection: Any, **context: Any) -> Any:
         """Write it for PostgreSQL."""
-        template = "((%(expressions)s) AT TIME ZONE 'UTC' + interval '%(ahead)d minutes')::date"
+        ahead = " + interval '%(ahead)d minutes'" if self.extra["ahead"] else ""
+        day = f"((%(expressions)s) AT TIME ZONE 'UTC'{ahead})::date"
+        template = f"({day} - date '0001-01-01' + 1)"
         return self.as_sql(compiler, connection, template=template, **context)
+
+
+class DayNumber(Func):
+    """A date as a number, as RecordDay gives it."""
+
+    output_field = AsFound()
+
+    def as_sqlite(self, compiler: Any, connection: Any, **context: Any) -> Any:
+        """Write it for SQLite, which keeps dates as text."""
+        template = "CAST(julianday(%(expressions)s) - 1721424.5 AS integer)"
+        return self.as_sql(compiler, connection, template=template, **context)
+
+    def as_postgresql(self, compiler: Any, connection: Any, **context: Any) -> Any:
+        """Write it for PostgreSQL."""
+        template = "((%(expressions)s) - date '0001-01-01' + 1)"
+        return self.as_sql(compiler, connection, template=template, **context)
+
+
+class Negative(Func):
+    """A day's number below zero: told apart without a second column, a look-up more a row."""
+
+    output_field = AsFound()
+    template = "(-(%(expressions)s))"
+
+
+def day(number: int | None) -> date | None:
+    """Return the date of a day's number."""
+    return None if number is None else date.fromordinal(number)
 
 
 class HoursBetween(Func):

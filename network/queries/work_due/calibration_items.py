@@ -5,14 +5,14 @@ from collections.abc import Iterator
 from datetime import date
 from typing import Any, NamedTuple
 
-from django.db.models import CharField, F, IntegerField, OuterRef, Q, QuerySet, Subquery, Sum, Value
-from django.db.models.functions import Cast, Coalesce
+from django.db.models import CharField, F, OuterRef, Q, QuerySet, Subquery, Sum, Value
+from django.db.models.functions import Coalesce
 
 from network.models import Calibration, Gauging, Instrument, KindInterval, MeterPair
-from network.numerics.due_dates import months_after
+from network.numerics.due_dates import SHORTEST_MONTH_DAYS, months_after
 from network.queries import clock
 from network.queries.instruments import METER_KINDS
-from network.queries.record_days import HoursBetween, RecordDay
+from network.queries.record_days import AsFound, HoursBetween, RecordDay, day
 from network.queries.work_due.items import Asked, Item, Kind
 
 IN_USE = [Instrument.Status.IN_SERVICE, Instrument.Status.SPARE]
@@ -53,17 +53,31 @@ def items(asked: Asked) -> Iterator[Item]:
 
 
 def calibrated_rows(asked: Asked) -> list[CalibratedRow]:
-    """Return meters and other instruments in use, in one query; withdrawn ones are left out."""
+    """Return all meters in use, and the other instruments that may be due, in one query."""
     pairs = MeterPair.objects.filter(body__status__in=IN_USE, rotor__status__in=IN_USE)
     others = Instrument.objects.filter(status__in=IN_USE).exclude(kind__in=METER_KINDS)
     if asked.instrument is not None:
         pairs = pairs.filter(Q(body=asked.instrument) | Q(rotor=asked.instrument))
         others = others.filter(pk=asked.instrument)
+    others = others.exclude(pk__in=_calibrated_lately(asked))
     own = Coalesce(_latest(pair=OuterRef("pk")), _latest(group=OuterRef("group")))
     meters = _columns(asked, pairs, Kind.CALIBRATION, of="body__", rotor=F("rotor__serial"), at=own)
     at = _latest(instrument=OuterRef("pk"))
-    rest = _columns(asked, others, Kind.INSTRUMENT, of="", rotor=Value(""), at=at)
+    rest = _columns(asked, others, Kind.INSTRUMENT, of="", rotor=Value("", CharField()), at=at)
     return [_row(asked, *row) for row in meters.union(rest, all=True)]
+
+
+def _calibrated_lately(asked: Asked) -> QuerySet[Any]:
+    """Return the instruments calibrated so lately that even the shortest months have not passed.
+
+    For the few others the exact day is found.
+    """
+    of_kind = KindInterval.objects.filter(kind=OuterRef("instrument__kind")).values("months")[:1]
+    own = F("instrument__interval_months")
+    days = SHORTEST_MONTH_DAYS * Coalesce(own, Subquery(of_kind), 0, output_field=AsFound())
+    rows = _that_count().filter(instrument__isnull=False)
+    rows = rows.alias(day=RecordDay("effective_from", of=asked.agency), days=days)
+    return rows.filter(day__gt=asked.until.toordinal() - F("days")).values("instrument")
 
 
 def hours_of_use(asked: Asked, rows: list[CalibratedRow]) -> dict[int, Use]:
@@ -85,9 +99,10 @@ def hours_of_use(asked: Asked, rows: list[CalibratedRow]) -> dict[int, Use]:
     days = much_used.order_by("started_at").values_list(
         "pair", RecordDay("started_at", of=asked.agency), USED
     )
-    for pair, day, hours in days:
-        if pair in since and day >= since[pair]:
-            found[pair].append((day, hours))
+    for pair, number, hours in days:
+        used_on = date.fromordinal(number)
+        if pair in since and used_on >= since[pair]:
+            found[pair].append((used_on, hours))
     return found
 
 
@@ -95,30 +110,47 @@ def _columns(
     asked: Asked, rows: QuerySet[Any], kind: Kind, *, of: str, rotor: Any, at: Any
 ) -> QuerySet[Any]:
     intervals = KindInterval.objects.filter(kind=OuterRef(f"{of}kind"))
-    return rows.order_by().values_list(
-        Value(kind.value, CharField()),
-        Cast("pk", IntegerField()),
-        Cast(f"{of}kind", CharField()),
-        Cast(f"{of}serial", CharField()),
-        Cast(rotor, CharField()),
-        F(f"{of}office"),
-        Coalesce(F(f"{of}interval_months"), Subquery(intervals.values("months")[:1])),
-        Coalesce(F(f"{of}interval_hours"), Subquery(intervals.values("hours")[:1])),
-        RecordDay(at, of=asked.agency),
+
+    def interval(unit: str) -> Coalesce:
+        of_kind = Subquery(intervals.values(unit)[:1])
+        return Coalesce(F(f"{of}interval_{unit}"), of_kind, output_field=AsFound())
+
+    return (
+        rows.order_by()
+        .annotate(
+            months=interval("months"),
+            hours=interval("hours"),
+            calibrated=RecordDay(at, of=asked.agency),
+        )
+        .values_list(
+            Value(kind.value, CharField()),
+            "pk",
+            f"{of}kind",
+            f"{of}serial",
+            rotor,
+            f"{of}office",
+            "months",
+            "hours",
+            "calibrated",
+        )
     )
 
 
 def _latest(**owner: OuterRef) -> Subquery:
-    """Return when an owner was last calibrated; a failed calibration leaves it uncalibrated."""
-    rows = Calibration.objects.standing().filter(**owner)
-    rows = rows.exclude(outcome=Calibration.Outcome.FAILED).order_by("-effective_from")
+    rows = _that_count().filter(**owner).order_by("-effective_from")
     return Subquery(rows.values("effective_from")[:1])
+
+
+def _that_count() -> QuerySet[Any]:
+    """Return standing calibrations; a failed one leaves an instrument uncalibrated."""
+    return Calibration.objects.standing().exclude(outcome=Calibration.Outcome.FAILED)
 
 
 def _row(
     asked: Asked, kind: str, pk: int, what: str, serial: str, rotor: str, office: int,
-    months: int | None, hours: int | None, calibrated_on: date | None,
+    months: int | None, hours: int | None, number: int | None,
 ) -> CalibratedRow:  # fmt: skip
+    calibrated_on = day(number)
     if kind == Kind.INSTRUMENT:
         return CalibratedRow(
             Kind.INSTRUMENT, pk, what, serial, office, months, hours, calibrated_on
@@ -147,10 +179,10 @@ def _by_months(asked: Asked, row: CalibratedRow) -> Item | None:
 def _by_hours(asked: Asked, row: CalibratedRow, use: Use) -> Iterator[Item]:
     """Find a meter used for as many hours as it may be; due since the gauging that made them."""
     total, due_on = 0.0, None
-    for day, hours in use:
+    for used_on, hours in use:
         total += hours
         if due_on is None and row.hours and total >= row.hours:
-            due_on = day
+            due_on = used_on
     if due_on is not None:
         facts = (row.kind_of_instrument, row.name, total)
         since = row.calibrated_on

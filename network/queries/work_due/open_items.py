@@ -42,7 +42,10 @@ def open_rows(asked: Asked) -> list[OpenRow]:
                at="visit__arrived_at", text="text", of="visit__"),
     ]  # fmt: skip
     found = rows[0].union(*rows[1:], all=True)
-    return [OpenRow(Kind(kind), *more) for kind, *more in found]
+    return [
+        OpenRow(Kind(kind), key, station, date.fromordinal(since), *more)
+        for kind, key, station, since, *more in found
+    ]
 
 
 def items(asked: Asked, rows: list[OpenRow], offices: Mapping[int, int]) -> Iterator[Item]:

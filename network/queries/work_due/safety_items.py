@@ -4,10 +4,11 @@ from collections.abc import Iterator
 from datetime import date
 from typing import NamedTuple
 
-from django.db.models import OuterRef, Subquery
+from django.db.models import Case, OuterRef, Subquery, When
 
 from network.models import Inspection, SafetyItem
 from network.numerics.due_dates import months_after
+from network.queries.record_days import DayNumber, Negative, day
 from network.queries.work_due.items import Asked, Item, Kind
 
 
@@ -31,13 +32,15 @@ def safety_rows(asked: Asked) -> list[SafetyRow]:
     rows = SafetyItem.objects.filter(removed_on__isnull=True)
     if asked.station is not None:
         rows = rows.filter(station=asked.station)
-    found = rows.annotate(
-        inspected=Subquery(last.values("inspected_on")[:1]),
-        safe=Subquery(last.values("is_safe")[:1]),
-    ).values_list(
-        "pk", "station", "kind", "label", "station__office", "interval_months", "inspected", "safe"
+    on = DayNumber("inspected_on")
+    safe_on = last.annotate(safe_on=Case(When(is_safe=True, then=on), default=Negative(on)))
+    found = rows.annotate(safe_on=Subquery(safe_on.values("safe_on")[:1])).values_list(
+        "pk", "station", "kind", "label", "station__office", "interval_months", "safe_on"
     )
-    return [SafetyRow(*row) for row in found]
+    return [
+        SafetyRow(*row, *((day(abs(safe_on)), safe_on > 0) if safe_on else (None, None)))
+        for *row, safe_on in found
+    ]
 
 
 def items(asked: Asked) -> Iterator[Item]:

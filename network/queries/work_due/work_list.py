@@ -114,8 +114,13 @@ def work_list(
     found = _found(asked)
     by_station = {row.pk: row for row in found.stations}
     put_off = _postponements(asked)
-    kept = [item for item in found.items if _passes(item, filters, by_station)]
-    shown = kept if filters.with_postponed else [i for i in kept if not _hidden(i, put_off)]
+    kept = list(found.items)
+    if filters.office is not None or filters.river:
+        kept = [item for item in kept if _passes(item, filters, by_station)]
+    hidden = [item for item in kept if _hidden(item, put_off)] if put_off else []
+    shown = kept
+    if hidden and not filters.with_postponed:
+        shown = [item for item in kept if not _hidden(item, put_off)]
     counts = Counter(item.kind for item in shown)
     chosen = [item for item in shown if filters.kind in (None, item.kind)]
     chosen.sort(key=_order)
@@ -132,7 +137,7 @@ def work_list(
         lines=_with_bands(lines, at) if with_bands else lines,
         counts={kind: counts[kind] for kind in Kind if counts[kind]},
         total=len(chosen),
-        postponed=sum(_hidden(item, put_off) for item in kept),
+        postponed=len(hidden),
         page=page,
         pages=pages,
         offices=tuple(sorted(offices.items(), key=lambda pair: pair[1])),
@@ -195,7 +200,7 @@ def _postponements(asked: Asked) -> dict[tuple[str, str], Postponement]:
 
 
 def _hidden(item: Item, put_off: Mapping[tuple[str, str], Postponement]) -> bool:
-    return bool(put_off) and (str(item.kind), item.subject) in put_off
+    return (str(item.kind), item.subject) in put_off
 
 
 def _passes(item: Item, filters: Filters, stations: Mapping[int, StationRow]) -> bool:
