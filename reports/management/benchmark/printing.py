@@ -1,5 +1,6 @@
 """Ratios of print: one yearbook, memory over many, binding ready PDFs."""
 
+import io
 import resource
 import time
 from collections.abc import Iterator
@@ -11,10 +12,10 @@ from pathlib import Path
 import django
 import pikepdf
 import weasyprint
+from django.core.management import call_command
 from weasyprint.text.fonts import FontConfiguration
 
 from network.models import Agency, Station
-from network.services.station_years import refresh
 from reports import particulars, rendering, volumes
 from reports.content import book
 from reports.management.benchmark.records import LAST_YEAR
@@ -29,7 +30,7 @@ def ratios(folder: Path, *, runs: int, yearbooks: int) -> Iterator[Ratio]:
     """Measure print on the one station of the database."""
     station = Station.objects.get()
     edition = particulars.Edition(number=1, compiled_on=date(2025, 1, 1))
-    refresh(station)
+    call_command("recompute_years", verbosity=0, stdout=io.StringIO())
 
     def whole() -> bytes:
         content, values = book.compile_book(station, LAST_YEAR, edition=edition)
