@@ -145,23 +145,25 @@ def write_pdf(page: Page, *, identity: str, **options: Any) -> bytes:
             finisher=add_scopes,
             **options,
         )
-    return _quick_to_open(pdf)
+    return _written_anew(pdf)
 
 
-def _quick_to_open(pdf: bytes) -> bytes:
-    """Write a PDF anew in object streams of a hundred, equal resources once.
+def _written_anew(pdf: bytes) -> bytes:
+    """Write WeasyPrint's PDF in object streams of a hundred, the texts of figures as plain forms.
 
-    WeasyPrint packs all into one stream, which must be read whole before the first page, and gives
-    each text of a figure its own resources: a volume of 200 would open each of its parts for
-    fifteen times as long and take twice the memory.
+    Its one stream of objects must be read whole before the first page, and each text of a figure
+    has resources of its own: a volume of 200 would open each part for fifteen times as long and
+    take twice the memory. And each such text is a transparency group, of which a browser at screen
+    size cuts off a part of the first letter.
     """
-    written = BytesIO()
+    written, shared = BytesIO(), dict[bytes, pikepdf.Object]()
     with pikepdf.open(BytesIO(pdf)) as document:
-        shared: dict[bytes, pikepdf.Object] = {}
         for one in document.objects:
             if isinstance(one, pikepdf.Stream) and Name.Resources in one:
                 resources = one.Resources
                 one.Resources = shared.setdefault(resources.unparse(resolved=True), resources)
+                if one.get(Name.Subtype) == Name.Form and Name.Group in one:
+                    del one.Group
         document.save(
             written, deterministic_id=True, object_stream_mode=pikepdf.ObjectStreamMode.generate
         )

@@ -61,7 +61,11 @@ class IceSpell:
 
 @dataclass(frozen=True)
 class Curve:
-    """Power segments [lower stage, C, h0, b], or a table of [stage, flow] with its rule."""
+    """Power segments [lower stage, C, h0, b], or a table of [stage, flow] with its rule.
+
+    What its statistics say: the scatter of its gaugings, the stages they cover, the 95 % band of
+    the mean relation as [stage, ± %].
+    """
 
     label: str
     lowest_use_m: float
@@ -74,6 +78,9 @@ class Curve:
     rule: str = ""
     h0_m: float = 0.0
     extrapolate_to_high_m: float | None = None
+    scatter_percent: float | None = None
+    gauged_m: tuple[float, ...] = ()
+    band: tuple[tuple[float, float], ...] = ()
 
 
 @dataclass(frozen=True)

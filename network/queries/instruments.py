@@ -2,7 +2,7 @@
 
 from collections.abc import Iterator
 from dataclasses import dataclass
-from datetime import date, datetime, timedelta
+from datetime import date, datetime
 
 from django.db.models import Q, QuerySet
 
@@ -11,10 +11,12 @@ from network.models import (
     Deployment,
     Gauging,
     Instrument,
+    KindInterval,
     MeterPair,
     Visit,
     WorkingRules,
 )
+from network.numerics.due_dates import months_after
 from network.queries import calibrations, clock
 
 METER_KINDS = {Instrument.Kind.METER_BODY, Instrument.Kind.METER_ROTOR}
@@ -48,22 +50,24 @@ def rules() -> WorkingRules:
 
 
 def pair_due(pair: MeterPair, at: datetime, *, of: WorkingRules) -> CalibrationDue:
-    """Tell when a current meter is due: its body's intervals, else the agency's."""
+    """Tell when a current meter is due: its own intervals, its kind's or the agency's."""
     last = calibrations.in_force(pair, at)
-    hours = calibrations.hours_of_use(pair, last.effective_from, at) if last else 0.0
+    used = calibrations.hours_of_use(pair, last.effective_from, at) if last else 0.0
+    months, hours = _intervals(pair.body)
     return _due(
         last,
-        months=pair.body.interval_months or of.calibration_months,
-        hours_used=hours,
-        hours_limit=pair.body.interval_hours or of.calibration_hours,
+        months=months or of.calibration_months,
+        hours_used=used,
+        hours_limit=hours or of.calibration_hours,
     )
 
 
 def instrument_due(instrument: Instrument, at: datetime) -> CalibrationDue:
-    """Tell when an instrument other than a meter is due, by its own interval if it has one."""
+    """Tell when an instrument other than a meter is due, by its own interval or its kind's."""
     rows = instrument.calibrations.standing().filter(effective_from__lte=at)
     rows = rows.exclude(outcome=Calibration.Outcome.FAILED).order_by("effective_from")
-    return _due(rows.last(), months=instrument.interval_months, hours_used=0.0, hours_limit=None)
+    months, _hours = _intervals(instrument)
+    return _due(rows.last(), months=months, hours_used=0.0, hours_limit=None)
 
 
 def standing_place(instrument: Instrument, at: datetime) -> Deployment | None:
@@ -113,18 +117,19 @@ def meters_due(at: datetime) -> Iterator[tuple[MeterPair, CalibrationDue]]:
             yield pair, due
 
 
+def _intervals(instrument: Instrument) -> tuple[int | None, int | None]:
+    """Return the months and hours between calibrations, each its own or else its kind's."""
+    of_kind = KindInterval.objects.filter(kind=instrument.kind).first() or KindInterval()
+    return (
+        instrument.interval_months or of_kind.months,
+        instrument.interval_hours or of_kind.hours,
+    )
+
+
 def _due(
     last: Calibration | None, *, months: int | None, hours_used: float, hours_limit: int | None
 ) -> CalibrationDue:
     own = clock.agency()
     since = clock.record_day(last.effective_from, of=own) if last else None
-    due_on = _months_after(since, months) if since and months else None
+    due_on = months_after(since, months) if since and months else None
     return CalibrationDue(last, due_on, months, hours_used, hours_limit)
-
-
-def _months_after(day: date, months: int) -> date:
-    """Return the same day some months on, the last of a shorter month."""
-    year, month = divmod(day.month - 1 + months, 12)
-    following = date(day.year + year + (month == 11), (month + 1) % 12 + 1, 1)
-    last = following - timedelta(days=1)
-    return last.replace(day=min(day.day, last.day))

@@ -2,11 +2,15 @@
 
 from datetime import timedelta
 
+import pypdfium2
 import pytest
+import zxingcpp
 from django.urls import reverse
 from django.utils import timezone
 
-from network.models import Postponement, Round
+from network.models import Postponement, Round, Station, Visit
+from network.services import rounds
+from reports.field_sheets import content, page
 from tests.browser.conftest import DESK, PHONE
 from tests.people import make_station
 from tests.work_rows import cableway, gauged, levelled, visited
@@ -96,3 +100,32 @@ def test_calendar_and_figures_fit_a_phone(busy, open_page, manager, picture, fit
     picture(page, "figures_phone")
     page.goto(reverse("admin:network_station_change", args=[busy.pk]))
     picture(page, "station_phone")
+
+
+def test_the_code_on_a_printed_sheet_opens_the_form_of_its_stop_on_a_phone(
+    busy, open_page, manager, field_person, live_server, settings, picture, fits_a_phone
+):
+    settings.SITE_URL = live_server.url
+    now, today = timezone.now(), timezone.localdate()
+    plan = rounds.save_round(
+        name="March", office=busy.office, first_day=today, last_day=today, by=manager, at=now
+    )
+    other = Station.objects.exclude(pk=busy.pk).first()
+    for row in (busy, other):
+        rounds.add_stop(round=plan, station=row, tasks=["oil the sheaves"], by=manager, at=now)
+    with pypdfium2.PdfDocument(page.pdf_of(content.sheets_of(plan, at=now))) as pdf:
+        (code,) = zxingcpp.read_barcodes(pdf[1].render(scale=2).to_pil())
+    phone = open_page(field_person, PHONE)
+    phone.goto(code.text)
+    assert phone.locator("#id_station").input_value() == str(other.pk)
+    assert phone.get_by_text("Deep water at the quay.").is_visible()
+    fits_a_phone(phone)
+    picture(phone, "stop_phone")
+    phone.fill("#id_arrived_at_0", today.isoformat())
+    phone.fill("#id_arrived_at_1", "00:01")
+    phone.locator("[name=_continue]").tap()
+    phone.wait_for_url("**/change/**")
+    visit = Visit.objects.get(recorded_by=field_person)
+    assert visit.form_id == plan.stops.get(station=other).form_id
+    phone.goto(code.text)  # the second phone of the party finds the visit, no other form
+    assert f"/visit/{visit.pk}/" in phone.url

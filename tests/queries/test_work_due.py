@@ -14,6 +14,7 @@ from network.models import (
     WorkingRules,
     WorkLeft,
 )
+from network.queries.instruments import pair_due
 from network.queries.work_due.items import Kind
 from network.queries.work_due.work_list import Filters, number_due, work_list
 from tests.people import make_station
@@ -267,10 +268,13 @@ def test_hours_before_the_calibration_are_not_counted(kept, office, by):
 
 
 def test_own_interval_then_the_kinds_then_the_agencys(kept, office, by):
-    meter(office, days_ago(200), by, serial="1")
+    pair = meter(office, days_ago(200), by, serial="1")
     assert due() == []
     KindInterval.objects.create(kind="body", months=6)
     assert only(Kind.CALIBRATION).reason == "calibrated 6 months ago; every 6"
+    # A round asks for one meter at a time, and is told the same.
+    alone = pair_due(pair, noon(TODAY), of=WorkingRules.objects.get())
+    assert (alone.months, alone.due_on) == (6, only(Kind.CALIBRATION).due_on)
     Instrument.objects.filter(kind="body").update(interval_months=24)
     assert due() == []
 
