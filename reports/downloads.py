@@ -1,8 +1,12 @@
-"""Hand a kept file over under a name that a reader can read."""
+"""Hand over a kept file, or one printed on request, under a name that a reader can read."""
+
+from collections.abc import Callable
 
 from django.db.models.fields.files import FieldFile
-from django.http import FileResponse, Http404
+from django.http import FileResponse, Http404, HttpResponse
 from django.utils.translation import gettext as _
+
+from reports.services import Refusal
 
 CSV = "text/csv; charset=utf-8"
 PDF = "application/pdf"
@@ -20,4 +24,15 @@ def handed_over(file: FieldFile, *, name: str) -> FileResponse:
     )
     response.headers["X-Content-Type-Options"] = "nosniff"
     response.headers["Content-Security-Policy"] = "default-src 'none'; frame-ancestors 'none'"
+    return response
+
+
+def printed(pdf_of: Callable[[], bytes], *, name: str) -> HttpResponse:
+    """Return a PDF made now, to look at; a sentence where this system cannot print."""
+    try:
+        body = pdf_of()
+    except Refusal as refusal:
+        return HttpResponse(str(refusal), status=503, content_type="text/plain; charset=utf-8")
+    response = HttpResponse(body, content_type=PDF)
+    response.headers["Content-Disposition"] = f'inline; filename="{name}.pdf"'
     return response

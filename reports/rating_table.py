@@ -15,7 +15,8 @@ from django.views.decorators.http import require_safe
 from network.models import Curve
 from network.numerics.sentences import Refused
 from network.queries import clock, rating_sheet, rating_table
-from reports import rendering
+from reports import downloads
+from reports.services import printer
 
 
 @staff_member_required(login_url="admin:login")
@@ -26,14 +27,11 @@ def rating_table_file(request: HttpRequest, pk: int) -> HttpResponse:
     if not request.user.has_perm("network.view_curve"):
         raise PermissionDenied
     row = get_object_or_404(Curve.objects.select_related("station", "approved_by"), pk=pk)
+    name = slugify(f"{row.station.code}-rating-{row.number}")
     try:
-        body = pdf_of(row)
+        return downloads.printed(lambda: pdf_of(row), name=name)
     except Refused as refused:
         raise Http404(rating_sheet.sentence_of(refused)) from refused
-    response = HttpResponse(body, content_type="application/pdf")
-    name = slugify(f"{row.station.code}-rating-{row.number}")
-    response["Content-Disposition"] = f'inline; filename="{name}.pdf"'
-    return response
 
 
 def pdf_of(row: Curve) -> bytes:
@@ -45,7 +43,9 @@ def pdf_of(row: Curve) -> bytes:
     with translation.override(own.language), timezone.override(clock.record_clock(own)):
         html = render_to_string("reports/rating_table.html", _content(row))
     identity = f"rating {row.pk} {row.recorded_at} {row.approved_at}"
-    return rendering.write_pdf(rendering.Page(html, {}), identity=identity)
+    rendering = printer("rendering")
+    pdf: bytes = rendering.write_pdf(rendering.Page(html, {}), identity=identity)
+    return pdf
 
 
 def _content(row: Curve) -> dict[str, Any]:

@@ -61,6 +61,14 @@ class Correction(Recorded, Withdrawable):
         return f"{self.start_offset_m:+.3f} … {self.end_offset_m:+.3f} m"
 
 
+def _uncertainty_positive(model: str) -> models.CheckConstraint:
+    return models.CheckConstraint(
+        name=f"network_{model}_uncertainty_positive",
+        condition=Q(uncertainty_percent__isnull=True) | Q(uncertainty_percent__gt=0),
+        violation_error_message=_("The uncertainty is above zero."),
+    )
+
+
 class Note(Recorded, Withdrawable):
     """What happened to the record in a period, and what its flows then are."""
 
@@ -109,11 +117,7 @@ class Note(Recorded, Withdrawable):
                     "open water."
                 ),
             ),
-            models.CheckConstraint(
-                name="network_note_uncertainty_positive",
-                condition=Q(uncertainty_percent__isnull=True) | Q(uncertainty_percent__gt=0),
-                violation_error_message=_("The uncertainty is above zero."),
-            ),
+            _uncertainty_positive("note"),
         ]
 
     def __str__(self) -> str:
@@ -153,6 +157,7 @@ class Infill(Recorded, Withdrawable):
         ordering = ["first_day"]
         constraints = [
             *Withdrawable.Meta.constraints,
+            _uncertainty_positive("infill"),
             models.CheckConstraint(
                 name="network_infill_in_order",
                 condition=Q(last_day__gte=F("first_day")),
@@ -199,6 +204,7 @@ class TypedFlow(Recorded, Withdrawable):
                 what="day_once",
                 message=_("This day already has a typed flow; withdraw it first."),
             ),
+            _uncertainty_positive("typedflow"),
             models.CheckConstraint(
                 name="network_typedflow_not_negative",
                 condition=Q(flow_m3s__gte=0),

@@ -9,6 +9,7 @@ import numpy as np
 from network.numerics.daily import DAY_S, NO_TIME_S, DailyExtremes
 from network.numerics.duration import duration_curve, standard_percentiles
 from network.numerics.earlier_years import EarlierFigures, over_years
+from network.numerics.hidden_peak import may_hide_peak
 from network.numerics.marks import Mark
 from network.numerics.water_year import PeriodFigures, month_figures, year_figures
 from network.numerics.water_year import YearFigures as KernelYear
@@ -18,8 +19,6 @@ from network.queries.station_inputs import load
 from reports import yearbook as y
 from reports.content.year_data import YearData
 from reports.printed import NO_EVENT, RECORDED, Event, Number
-
-UNRECORDED = Mark.MISSING | Mark.WITHHELD | Mark.PARTIAL
 
 
 def daily_table(data: YearData) -> y.DailyTable:
@@ -231,7 +230,8 @@ def _extreme(data: YearData, parts: Sequence[StationDays], *, highest: bool) -> 
         return _told(data, float(daily[at]), None, day, at_least=highest)
     at = int(np.argmax(read))
     instant = datetime.fromtimestamp(int(times[at]), UTC) if times[at] != NO_TIME_S else None
-    doubt = highest and any(bool((part.marks & UNRECORDED).any()) for part in parts)
+    marks = np.concatenate([part.marks for part in parts])
+    doubt = highest and may_hide_peak(daily, values, marks)
     return _told(data, float(values[at]), instant, None, at_least=doubt)
 
 

@@ -10,7 +10,9 @@ from django.views.decorators.cache import never_cache
 from django.views.decorators.http import require_safe
 
 from network.models import Round
-from reports.field_sheets import content, page
+from reports import downloads
+from reports.field_sheets import content
+from reports.services import printer
 
 
 @staff_member_required(login_url="admin:login")
@@ -21,8 +23,6 @@ def field_sheets(request: HttpRequest, pk: int) -> HttpResponse:
     if not request.user.has_perm("network.view_round"):
         raise PermissionDenied
     plan = get_object_or_404(Round.objects.select_related("office"), pk=pk)
-    body = page.pdf_of(content.sheets_of(plan, at=timezone.now()))
-    response = HttpResponse(body, content_type="application/pdf")
+    sheets = content.sheets_of(plan, at=timezone.now())
     name = slugify(plan.name) or f"round-{plan.pk}"
-    response["Content-Disposition"] = f'inline; filename="{name}.pdf"'
-    return response
+    return downloads.printed(lambda: printer("field_sheets.page").pdf_of(sheets), name=name)

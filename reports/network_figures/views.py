@@ -17,7 +17,9 @@ from django.views.decorators.cache import never_cache
 from django.views.decorators.http import require_safe
 
 from network.queries.network_figures import NetworkFigures, Period, figures
-from reports.network_figures import page, table
+from reports import downloads
+from reports.network_figures import table
+from reports.services import printer
 
 STATIONS_A_PAGE = 50
 LONGEST = timedelta(days=366 * 30)
@@ -53,9 +55,12 @@ def network_figures(request: HttpRequest, ending: str = "html") -> HttpResponse:
     period = Period(form.cleaned_data["first"], form.cleaned_data["last"])
     found = figures(period, at=timezone.now())
     if ending == "csv":
-        return _file(table.csv_of(found), period, "text/csv; charset=utf-8", "csv")
+        response = HttpResponse(table.csv_of(found), content_type=downloads.CSV)
+        response["Content-Disposition"] = f'inline; filename="{_name(period)}.csv"'
+        return response
     if ending == "pdf":
-        return _file(page.pdf_of(found), period, "application/pdf", "pdf")
+        name = _name(period)
+        return downloads.printed(lambda: printer("network_figures.page").pdf_of(found), name=name)
     return _screen(request, form, found)
 
 
@@ -70,11 +75,8 @@ def _year_before(day: date) -> date:
     return day - timedelta(days=364)
 
 
-def _file(body: bytes, period: Period, kind: str, ending: str) -> HttpResponse:
-    response = HttpResponse(body, content_type=kind)
-    name = f"network_{period.first_day}_{period.last_day}.{ending}"
-    response["Content-Disposition"] = f'inline; filename="{name}"'
-    return response
+def _name(period: Period) -> str:
+    return f"network_{period.first_day}_{period.last_day}"
 
 
 def _screen(request: HttpRequest, form: PeriodForm, found: NetworkFigures | None) -> HttpResponse:

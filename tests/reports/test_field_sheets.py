@@ -8,6 +8,7 @@ from django.urls import reverse
 
 from network.models import PlateZero, StaffPlate
 from network.services import plans, rounds
+from reports import services
 from reports.field_sheets import content, page
 from tests.people import make_station
 from tests.work_rows import cableway, gauged, noon, visited
@@ -94,3 +95,16 @@ def test_staff_print_a_round_and_nobody_else(client, march, field_person):
     response = client.get(address)
     assert response["Content-Type"] == "application/pdf"
     assert response.content.startswith(b"%PDF")
+
+
+def test_where_nothing_can_be_printed_the_page_says_what_to_install(
+    client, march, field_person, monkeypatch
+):
+    def lacking(_name):
+        raise OSError("cannot load library 'libpango-1.0-0'")
+
+    monkeypatch.setattr(services, "import_module", lacking)
+    client.force_login(field_person)
+    response = client.get(reverse("reports:field_sheets", args=[march.pk]))
+    assert response.status_code == 503
+    assert "libpango" in response.text
