@@ -10,7 +10,7 @@ from typing import Any
 
 from django.conf import settings
 from django.core.checks import run_checks
-from django.utils import timezone
+from django.utils import timezone, translation
 from django.utils.translation import gettext as _
 
 from network.formats import kept_files
@@ -84,7 +84,7 @@ def issue(
         raise Refusal(_("Only a compiled edition can be issued."))
     year = station_years.calendar().year_of(edition.first_day)
     seen = edition.numbers_sha256
-    edition.open_points = "\n".join(_open_points(edition.station, year))
+    edition.open_points = "\n".join(_open_points(edition.station, year, edition.language))
     edition.reason = superseding.strip() or edition.reason
     _sign(edition, by=by, at=at, reason=reason)
     _write_files(edition, year)
@@ -189,7 +189,7 @@ def _next_edition(
         compiled_at=at,
         compiled_by=by,
         reason=reason.strip(),
-        open_points="\n".join(_open_points(station, year)),
+        open_points="\n".join(_open_points(station, year, language or clock.agency().language)),
     )
 
 
@@ -239,8 +239,9 @@ def owed(edition: Edition) -> Owed:
     )
 
 
-def _open_points(station: Station, year: int) -> list[str]:
-    return readiness.open_points(station, station_years.year_of_station(station, year))
+def _open_points(station: Station, year: int, language: str | None = None) -> list[str]:
+    with translation.override(language or translation.get_language()):
+        return readiness.open_points(station, station_years.year_of_station(station, year))
 
 
 def _write_files(edition: Edition, year: int, progress: Report = _no_progress) -> None:

@@ -73,6 +73,13 @@ def test_a_compiled_edition_keeps_its_files_under_their_hashes(compiled):
     assert Act.objects.filter(verb__contains="compiled").count() == 1
 
 
+def test_open_points_are_written_in_the_language_of_the_print(quick, station, publisher):
+    edition = services.compile_edition(
+        station=station, year=world.YEAR, language="de", by=publisher, **WHEN
+    )
+    assert edition.open_points == "Die Aufzeichnung wurde noch nie durchgesehen."
+
+
 def test_compiling_keeps_the_days_of_every_year_it_prints_beside(compiled, station):
     kept = StationYear.objects.filter(station=station).values_list("first_day", flat=True)
     assert compiled.first_day in kept
