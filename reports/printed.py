@@ -5,7 +5,7 @@ from datetime import date, datetime
 
 from network.numerics.marks import Mark
 from network.numerics.printing import ABSENT, figures_text, fixed_text
-from network.numerics.water_year import rounded
+from network.numerics.years.water_year import rounded
 
 # Footnote signs; all of them stand in the report's font. A missing value is a dash and needs none.
 SIGNS = {

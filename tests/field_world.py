@@ -3,9 +3,9 @@
 from datetime import UTC, datetime, timedelta
 
 from network.models import Agency, Instrument, Office, Person, Station, WorkingRules
-from network.numerics.curves import Segment
-from network.numerics.gauging_input import Bank, Channel, Point, Vertical
-from network.numerics.meter_rating import Piece
+from network.numerics.gaugings.gauging_input import Bank, Channel, Point, Vertical
+from network.numerics.meters.meter_rating import Piece
+from network.numerics.ratings.curves import Segment
 from network.queries.field_sheets import FieldSheet, Heading, StageRow
 from network.services import calibrations, instruments, ratings
 

@@ -5,7 +5,7 @@ from datetime import UTC, datetime, timedelta
 import numpy as np
 
 from network.models import Gauging, Person, StageReading
-from network.numerics.curves import Segment
+from network.numerics.ratings.curves import Segment
 from network.services import ratings
 from tests import records
 

@@ -3,7 +3,7 @@
 from decimal import Decimal
 from typing import Literal
 
-from network.numerics.water_year import ROUNDING, number_text
+from network.numerics.years.water_year import ROUNDING, number_text
 
 ABSENT = "–"
 

@@ -6,7 +6,7 @@ from datetime import UTC, datetime
 from typing import Any
 
 from network.models import Gauging, StageReading, Station, VisitReading
-from network.numerics.recorder_checks import ProposedCorrection
+from network.numerics.records.recorder_checks import ProposedCorrection
 from network.queries import gauges, recorder_checks
 
 

@@ -9,8 +9,8 @@ import numpy as np
 from django.db.models import Count, Max, Min, Sum
 
 from network.models import Block, Series, Station
-from network.numerics.blocks import decode, decode_many
-from network.numerics.readings import Readings
+from network.numerics.records.blocks import decode, decode_many
+from network.numerics.records.readings import Readings
 from network.queries import clock
 
 

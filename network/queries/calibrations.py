@@ -17,8 +17,8 @@ from django.db.models import (
 from django.db.models.functions import Coalesce
 
 from network.models import Calibration, CalibrationPiece, Gauging, MeterPair
-from network.numerics.gauging_input import Meter
-from network.numerics.meter_rating import Piece
+from network.numerics.gaugings.gauging_input import Meter
+from network.numerics.meters.meter_rating import Piece
 
 HOUR = timedelta(hours=1)
 DURATION = ExpressionWrapper(F("ended_at") - F("started_at"), output_field=DurationField())

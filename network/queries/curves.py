@@ -14,7 +14,7 @@ from network.models import (
     ShiftTable,
     Station,
 )
-from network.numerics import curves, rating
+from network.numerics.ratings import curves, rating
 from network.queries import in_force
 
 

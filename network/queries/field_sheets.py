@@ -6,8 +6,8 @@ from datetime import UTC, datetime
 
 import network.models as models
 from network.models import Gauging
-from network.numerics.gauging_input import Bank, Channel, Edge, Point, Vertical
-from network.numerics.other_methods import Fill
+from network.numerics.gaugings.gauging_input import Bank, Channel, Edge, Point, Vertical
+from network.numerics.gaugings.other_methods import Fill
 from network.queries import in_force
 
 

@@ -9,11 +9,11 @@ import numpy.typing as npt
 
 from network.models import Note, Station
 from network.numerics.arrays import Bools, Floats, MarkBits, Seconds
-from network.numerics.daily import DailyExtremes, Days, daily_extremes, daily_means
 from network.numerics.marks import Mark
-from network.numerics.rating import Rated, rate
-from network.numerics.readings import Readings, no_readings
-from network.numerics.stage import to_stage
+from network.numerics.ratings.rating import Rated, rate
+from network.numerics.records.readings import Readings, no_readings
+from network.numerics.records.stage import to_stage
+from network.numerics.years.daily import DailyExtremes, Days, daily_extremes, daily_means
 from network.queries import blocks, infills
 from network.queries.station_inputs import SeriesInputs, StationInputs, load
 

@@ -16,7 +16,7 @@ from network.models import (
     StationZero,
 )
 from network.models.chains import ChainRow
-from network.numerics import plates as kernel
+from network.numerics.levels import plates as kernel
 from network.queries import in_force
 from network.queries.working_rules import rules
 

@@ -8,22 +8,22 @@ import numpy as np
 from django.db.models import prefetch_related_objects
 
 from network.models import Agency, Calibration, Gauging, StaffPlate, WorkingRules
-from network.numerics import gauging as kernel
-from network.numerics.gauging_faults import BadSheet, Fault
-from network.numerics.gauging_findings import rating_deviation
-from network.numerics.gauging_input import (
+from network.numerics.gaugings import gauging as kernel
+from network.numerics.gaugings.gauging_faults import BadSheet, Fault
+from network.numerics.gaugings.gauging_findings import rating_deviation
+from network.numerics.gaugings.gauging_input import (
     DischargeMethod,
     GaugingSettings,
     Meter,
     Sheet,
     StageReading,
 )
-from network.numerics.gauging_result import Gauging as GaugingResult
-from network.numerics.gauging_result import Preview
-from network.numerics.mean_stage import MeanStage, mean_stage
-from network.numerics.other_methods import OtherGauging
+from network.numerics.gaugings.gauging_result import Gauging as GaugingResult
+from network.numerics.gaugings.gauging_result import Preview
+from network.numerics.gaugings.mean_stage import MeanStage, mean_stage
+from network.numerics.gaugings.other_methods import OtherGauging
+from network.numerics.gaugings.vertical_findings import Finding
 from network.numerics.sentences import gettext_noop, sentence
-from network.numerics.vertical_findings import Finding
 from network.queries import calibrations, clock, other_methods, station_facts
 from network.queries.field_sheets import FieldSheet, known_stages, of_gauging
 from network.queries.in_force import seconds

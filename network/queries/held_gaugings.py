@@ -7,7 +7,7 @@ from datetime import datetime, timedelta
 import numpy as np
 
 from network.models import Gauging, Station
-from network.numerics.rating import RatingPeriod, rate
+from network.numerics.ratings.rating import RatingPeriod, rate
 from network.queries import gaugings, in_force
 from network.queries.station_inputs import rating_periods
 

@@ -9,8 +9,8 @@ import numpy as np
 import numpy.typing as npt
 
 from network.models import Infill, Station
-from network.numerics import infill
 from network.numerics.arrays import Floats
+from network.numerics.years import infill
 from network.queries.station_inputs import InfillSpan
 
 

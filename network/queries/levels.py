@@ -8,15 +8,15 @@ from functools import cached_property
 from django.utils.translation import gettext as _
 
 from network.models import Benchmark, LevelCheck, Sight, StaffPlate, Station
-from network.numerics.level_book import Sight as BookedSight
-from network.numerics.level_errors import (
+from network.numerics.levels.level_book import Sight as BookedSight
+from network.numerics.levels.level_errors import (
     LevelError,
     PlateMark,
     benchmark_errors,
     plate_errors,
     two_set_up_findings,
 )
-from network.numerics.levelling import (
+from network.numerics.levels.levelling import (
     LevelBook,
     LevelLimits,
     LevelRow,
@@ -24,7 +24,7 @@ from network.numerics.levelling import (
     adjust,
     reduce_book,
 )
-from network.numerics.peg_test import PegSetUp, PegTest, peg_test
+from network.numerics.levels.peg_test import PegSetUp, PegTest, peg_test
 from network.numerics.sentences import Refused
 from network.queries import gauges, in_force, working_rules
 from network.queries.level_sheet import LevelSheet, PegRow, SightRow, sheet_of

@@ -6,9 +6,9 @@ from dataclasses import dataclass
 import numpy as np
 
 from network.models import Calibration, Gauging
-from network.numerics import gauging as kernel
-from network.numerics.gauging_input import Meter
-from network.numerics.meter_rating import RatingChange, compare
+from network.numerics.gaugings import gauging as kernel
+from network.numerics.gaugings.gauging_input import Meter
+from network.numerics.meters.meter_rating import RatingChange, compare
 from network.queries import calibrations, clock, station_facts
 from network.queries.field_sheets import of_gauging
 from network.queries.gaugings import kernel_sheet, settings_of

@@ -9,10 +9,10 @@ from django.utils.translation import gettext as _
 
 from network.models import Curve, Station
 from network.numerics.arrays import Floats
-from network.numerics.fitted_rating import RatingFit
-from network.numerics.next_gauging import StageBand, narrowing_bands
-from network.numerics.rating_fit import fit_rating
-from network.numerics.rating_parts import FitChoice, FitRefused
+from network.numerics.ratings.fitted_rating import RatingFit
+from network.numerics.ratings.next_gauging import StageBand, narrowing_bands
+from network.numerics.ratings.rating_fit import fit_rating
+from network.numerics.ratings.rating_parts import FitChoice, FitRefused
 from network.queries import gaugings, rating_health, rating_points, stages_that_occur
 from network.queries.working_rules import rules
 

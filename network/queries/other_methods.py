@@ -4,13 +4,13 @@ from itertools import groupby
 
 import numpy as np
 
-from network.numerics import dilution, moving_boat, other_methods
-from network.numerics.gauging_faults import BadSheet, Fault
-from network.numerics.other_methods import OtherGauging
+from network.numerics.gaugings import dilution, moving_boat, other_methods
+from network.numerics.gaugings.gauging_faults import BadSheet, Fault
+from network.numerics.gaugings.other_methods import OtherGauging
+from network.numerics.gaugings.vertical_findings import Finding
+from network.numerics.ratings.weirs import RectangularNotch, VNotch
+from network.numerics.ratings.weirs import Weir as Notch
 from network.numerics.sentences import gettext_noop, sentence
-from network.numerics.vertical_findings import Finding
-from network.numerics.weirs import RectangularNotch, VNotch
-from network.numerics.weirs import Weir as Notch
 from network.queries.field_sheets import Boat, FieldSheet, Fills, Floats, Tracer, Weir
 
 STATED = gettext_noop("stated with the result")

@@ -6,7 +6,7 @@ from dataclasses import dataclass
 from datetime import datetime
 
 from network.models import Station
-from network.numerics import plates as kernel
+from network.numerics.levels import plates as kernel
 from network.queries import gauges
 from network.queries.working_rules import rules
 

@@ -7,8 +7,8 @@ from datetime import UTC, datetime
 import numpy as np
 from django.utils.translation import gettext as _
 
-from network.numerics import curves as kernel
 from network.numerics.arrays import Bools, Floats
+from network.numerics.ratings import curves as kernel
 from network.queries.chart_axes import Axis, Tick, area, around, around_log, polyline
 from network.queries.held_gaugings import Held
 from network.queries.rating_points import UNSTATED_U95_PERCENT, Point

@@ -6,7 +6,7 @@ from dataclasses import dataclass
 import numpy as np
 
 from network.numerics.arrays import Bools, Floats
-from network.numerics.curves import Curve, flow
+from network.numerics.ratings.curves import Curve, flow
 
 BANDS = 12
 

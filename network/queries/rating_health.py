@@ -14,7 +14,7 @@ from django.utils.translation import gettext as _
 
 from network.models import Curve, CurveGauging, Gauging, RatingPeriod, ShiftTable, Station
 from network.numerics.arrays import Floats
-from network.numerics.rating_tests import Side, in_a_row
+from network.numerics.ratings.rating_tests import Side, in_a_row
 from network.queries import curves, gaugings, held_gaugings, rating_points
 from network.queries.held_gaugings import Held
 from network.queries.working_rules import rules

@@ -10,12 +10,12 @@ import numpy as np
 from django.utils.translation import gettext as _
 
 from network.models import Curve as CurveRow
-from network.numerics import curves as kernel
 from network.numerics.arrays import Bools, Floats
-from network.numerics.fitted_rating import RatingFit
-from network.numerics.rating_fit import deviations_percent, fit_rating
-from network.numerics.rating_parts import FitChoice, FitRefused
-from network.numerics.rating_tests import TestResult, bias_test, sign_change_test, sign_test
+from network.numerics.ratings import curves as kernel
+from network.numerics.ratings.fitted_rating import RatingFit
+from network.numerics.ratings.rating_fit import deviations_percent, fit_rating
+from network.numerics.ratings.rating_parts import FitChoice, FitRefused
+from network.numerics.ratings.rating_tests import TestResult, bias_test, sign_change_test, sign_test
 from network.numerics.sentences import Refused, gettext_noop
 from network.queries import curves, rating_points
 from network.queries.rating_points import Points

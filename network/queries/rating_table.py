@@ -6,8 +6,8 @@ from dataclasses import dataclass
 import numpy as np
 
 from network.numerics.arrays import Floats
-from network.numerics.curves import Curve, flow
 from network.numerics.marks import Mark
+from network.numerics.ratings.curves import Curve, flow
 
 MOST_ROWS = 2_000  # 200 m of stage: a wrong unit was typed
 

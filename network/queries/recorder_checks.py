@@ -5,7 +5,7 @@ from dataclasses import dataclass
 from datetime import UTC, datetime, timedelta
 
 from network.models import Correction, RecorderCheck, Series, Visit, VisitReading
-from network.numerics import recorder_checks as kernel
+from network.numerics.records import recorder_checks as kernel
 from network.queries import gauges, in_force
 from network.queries.working_rules import rules
 

@@ -3,7 +3,7 @@
 from collections.abc import Callable
 from dataclasses import dataclass
 
-from network.numerics.gauging_input import Channel
+from network.numerics.gaugings.gauging_input import Channel
 from network.queries.gaugings import Answer
 
 WIDTH, HEIGHT = 400.0, 250.0

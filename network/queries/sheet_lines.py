@@ -7,8 +7,8 @@ from datetime import datetime, timedelta
 
 from django.utils import timezone
 
-from network.numerics.gauging_faults import Fault
-from network.numerics.gauging_input import Bank, Channel, Edge, Point, Vertical
+from network.numerics.gaugings.gauging_faults import Fault
+from network.numerics.gaugings.gauging_input import Bank, Channel, Edge, Point, Vertical
 from network.numerics.sentences import gettext_noop, sentence
 from network.queries.field_sheets import instant
 

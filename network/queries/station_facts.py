@@ -29,9 +29,9 @@ from network.models import (
     ShiftTable,
     Station,
 )
-from network.numerics.curves import stage_for
-from network.numerics.rating import ALWAYS_S, rate
-from network.numerics.rating import RatingPeriod as KernelPeriod
+from network.numerics.ratings.curves import stage_for
+from network.numerics.ratings.rating import ALWAYS_S, rate
+from network.numerics.ratings.rating import RatingPeriod as KernelPeriod
 from network.queries import curves, in_force
 
 USE = (

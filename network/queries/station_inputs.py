@@ -9,9 +9,9 @@ import numpy as np
 
 from network.models import Correction, Gauging, Infill, Note, Series, Station, TypedFlow
 from network.numerics.arrays import Floats, Seconds
-from network.numerics.daily import day_starts
-from network.numerics.rating import RatingPeriod
-from network.numerics.stage import SensorSettings, StageCorrection
+from network.numerics.ratings.rating import RatingPeriod
+from network.numerics.records.stage import SensorSettings, StageCorrection
+from network.numerics.years.daily import day_starts
 from network.queries import clock, curves, in_force
 
 ONE_DAY = timedelta(days=1)

@@ -7,8 +7,8 @@ from datetime import date
 import numpy as np
 
 from network.models import Station, StationYear
-from network.numerics.daily import DailyExtremes
-from network.numerics.water_year import WaterYear
+from network.numerics.years.daily import DailyExtremes
+from network.numerics.years.water_year import WaterYear
 from network.queries import blocks, clock, flows
 from network.queries.flows import StationDays
 

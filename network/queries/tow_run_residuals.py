@@ -4,7 +4,7 @@ from collections.abc import Sequence
 from dataclasses import dataclass
 
 from network.models import Calibration
-from network.numerics.meter_rating import velocity
+from network.numerics.meters.meter_rating import velocity
 from network.queries.calibrations import kernel_pieces
 
 WIDTH, HEIGHT, LEFT, BOTTOM, TOP = 400.0, 240.0, 40.0, 210.0, 12.0

@@ -7,9 +7,9 @@ from typing import Any
 import numpy as np
 
 from network.models import Curve as CurveRow
-from network.numerics.curves import Segment, SegmentCurve, TableCurve
+from network.numerics.ratings.curves import Segment, SegmentCurve, TableCurve
+from network.numerics.ratings.weirs import RectangularNotch, VNotch, weir_table
 from network.numerics.sentences import Refused, gettext_noop, sentence
-from network.numerics.weirs import RectangularNotch, VNotch, weir_table
 from network.queries.rating_points import Points
 from network.queries.rating_sheet import Sheet, examined
 from network.queries.sentences import said

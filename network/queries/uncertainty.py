@@ -6,9 +6,9 @@ import numpy as np
 
 from network.models import RatingPeriod, Station, WorkingRules
 from network.numerics.arrays import Floats, Seconds
-from network.numerics.flow_uncertainty import daily_u95_m3s, estimated_u95_m3s, flow_u95_m3s
 from network.numerics.marks import Mark
-from network.numerics.rating import Rated
+from network.numerics.ratings.rating import Rated
+from network.numerics.years.flow_uncertainty import daily_u95_m3s, estimated_u95_m3s, flow_u95_m3s
 from network.queries import clock, curves, flows, in_force
 from network.queries.flows import StationDays
 from network.queries.station_inputs import ONE_DAY, load

@@ -8,7 +8,7 @@ from itertools import combinations
 from django.utils.translation import gettext as _
 
 from network.models import Deployment, Instrument, Person, Series, Station, Visit, WorkLeft
-from network.numerics import plates as kernel
+from network.numerics.levels import plates as kernel
 from network.queries import gauges
 from network.queries.sentences import said
 from network.queries.visit_sheet import CheckRow, ReadingRow, VisitSheet

@@ -1,7 +1,7 @@
 """The agency's limits, and those among them that the kernel asks for together."""
 
 from network.models import WorkingRules
-from network.numerics.levelling import LevelLimits
+from network.numerics.levels.levelling import LevelLimits
 
 PEG_TEST_SIGHT_M = 50  # the length over which the agency states its limit of collimation
 

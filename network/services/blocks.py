@@ -9,8 +9,8 @@ from django.utils.translation import gettext as _
 from network.formats.faults import FileFault
 from network.formats.logger_csv import LoggerFile, read
 from network.models import Block, LoggerImport, Series
-from network.numerics.blocks import encode
-from network.numerics.readings import Readings, merge, split_by_month
+from network.numerics.records.blocks import encode
+from network.numerics.records.readings import Readings, merge, split_by_month
 from network.queries.blocks import month_of, months_between, read_months
 from network.services import originals, profiles
 

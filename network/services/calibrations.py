@@ -17,9 +17,9 @@ from network.models import (
     Person,
     TowRun,
 )
-from network.numerics.meter_rating import Piece, check_pieces
+from network.numerics.meters.meter_rating import Piece, check_pieces
+from network.numerics.meters.tow_runs import TowRunFit, fit_tow_runs
 from network.numerics.sentences import Refused
-from network.numerics.tow_runs import TowRunFit, fit_tow_runs
 from network.services import acts
 from network.services.acts import Refusal, open_act
 

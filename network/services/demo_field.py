@@ -14,10 +14,10 @@ from network.formats.demo_field_rows import (
     VisitStory,
 )
 from network.formats.demo_rows import Plate
-from network.numerics.gauging_input import Channel
-from network.numerics.meter_rating import Piece
-from network.numerics.synthetic import stream
-from network.numerics.synthetic_field import Section, TowRun, make_channel, make_tow_runs
+from network.numerics.gaugings.gauging_input import Channel
+from network.numerics.meters.meter_rating import Piece
+from network.numerics.synthetic.basin import stream
+from network.numerics.synthetic.field import Section, TowRun, make_channel, make_tow_runs
 from network.services.demo_world import Truth, primary, recorded_error, seconds
 
 READ_TO_M = 0.005

@@ -4,8 +4,8 @@ import re
 
 import numpy as np
 
-from network.numerics.other_methods import Fill
-from network.numerics.synthetic import stream
+from network.numerics.gaugings.other_methods import Fill
+from network.numerics.synthetic.basin import stream
 from network.queries.field_sheets import (
     Boat,
     Crossing,

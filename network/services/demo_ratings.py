@@ -10,7 +10,7 @@ from network.formats.demo_record_rows import Curve as CurveRow
 from network.formats.demo_record_rows import RatingPeriod as PeriodRow
 from network.formats.demo_rows import Station as StationRow
 from network.models import Curve, Gauging, RatingPeriod
-from network.numerics.curves import Segment
+from network.numerics.ratings.curves import Segment
 from network.services import ratings, station_zeros
 from network.services.demo_cast import Cast, Due
 from network.services.demo_registry import moves_of

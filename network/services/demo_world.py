@@ -11,9 +11,9 @@ from network.formats.demo_record_rows import ShiftTable as ShiftRow
 from network.formats.demo_rows import Station
 from network.formats.demo_scenario import Scenario
 from network.numerics.arrays import Floats, Seconds
-from network.numerics.curves import Curve, Segment, SegmentCurve, TableCurve
-from network.numerics.rating import RatingPeriod, ShiftTable
-from network.numerics.synthetic import (
+from network.numerics.ratings.curves import Curve, Segment, SegmentCurve, TableCurve
+from network.numerics.ratings.rating import RatingPeriod, ShiftTable
+from network.numerics.synthetic.basin import (
     DAY_S,
     Catchment,
     Spell,
@@ -24,7 +24,7 @@ from network.numerics.synthetic import (
     route,
     stream,
 )
-from network.numerics.synthetic_record import (
+from network.numerics.synthetic.record import (
     Fault,
     IceSpell,
     ice_backwater,

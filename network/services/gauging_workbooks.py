@@ -14,8 +14,8 @@ from network.formats.faults import FileFault, Sentence
 from network.formats.gauging_sheet import GaugingBook, SheetRow, SheetStage, SlotCells
 from network.models import Channel as ChannelRow
 from network.models import Gauging, MeterPair, Person, StaffPlate, Station
-from network.numerics.gauging_input import Channel, Point
-from network.numerics.sounding_lines import WET_LINE_ANGLES_DEG, WET_LINE_PERCENT
+from network.numerics.gaugings.gauging_input import Channel, Point
+from network.numerics.gaugings.sounding_lines import WET_LINE_ANGLES_DEG, WET_LINE_PERCENT
 from network.queries import calibrations, clock
 from network.queries.field_sheets import FieldSheet, Heading, StageRow, of_gauging
 from network.queries.gaugings import settings_of

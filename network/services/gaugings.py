@@ -8,9 +8,9 @@ from django.utils.translation import gettext as _
 from simple_history.utils import bulk_update_with_history
 
 from network.models import Gauging, GaugingFinding, Infill, Person, Vertical
-from network.numerics.gauging_faults import Fault
+from network.numerics.gaugings.gauging_faults import Fault
+from network.numerics.gaugings.vertical_findings import Finding
 from network.numerics.sentences import Sentence
-from network.numerics.vertical_findings import Finding
 from network.queries import clock, field_sheets, gaugings
 from network.queries.field_sheets import FieldSheet
 from network.queries.gaugings import Answer

@@ -25,9 +25,9 @@ from network.models import (
     Series,
     Station,
 )
-from network.numerics.readings import Readings
-from network.numerics.synthetic import Weather, make_weather
-from network.numerics.synthetic_station import SyntheticStation, make_station
+from network.numerics.records.readings import Readings
+from network.numerics.synthetic.basin import Weather, make_weather
+from network.numerics.synthetic.station import SyntheticStation, make_station
 from network.services import blocks, setting_up
 from network.services.acts import Refusal
 

@@ -15,7 +15,7 @@ from network.formats.faults import FileFault, RowFault
 from network.formats.logger_csv import LoggerFile, read
 from network.formats.text_encoding import Progress
 from network.models import ImportFault, LoggerImport, MappingProfile, Person, Series
-from network.numerics.readings import Readings
+from network.numerics.records.readings import Readings
 from network.queries import blocks as stored
 from network.queries.series import operation_span
 from network.services import blocks, originals, profiles

@@ -17,7 +17,7 @@ from network.models import (
     Person,
     Station,
 )
-from network.numerics.curves import Segment, SegmentCurve, TableCurve, joint_gaps
+from network.numerics.ratings.curves import Segment, SegmentCurve, TableCurve, joint_gaps
 from network.numerics.sentences import Refused
 from network.queries import curves
 from network.queries.rating_sheet import Sheet

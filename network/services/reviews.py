@@ -6,7 +6,7 @@ from typing import get_args
 from django.utils.translation import gettext as _
 
 from network.models import Dismissal, Person, RecordReview, Series, Station
-from network.numerics.screening_findings import Kind
+from network.numerics.records.screening_findings import Kind
 from network.queries import clock
 from network.services.acts import Refusal, lock_station, open_act, required_reason, withdraw
 

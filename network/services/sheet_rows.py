@@ -7,7 +7,7 @@ from simple_history.utils import bulk_create_with_history
 
 import network.models as models
 from network.models import Gauging
-from network.numerics.gauging_input import Bank, Channel, Vertical
+from network.numerics.gaugings.gauging_input import Bank, Channel, Vertical
 from network.queries.field_sheets import (
     Boat,
     FieldSheet,

@@ -13,7 +13,7 @@ from django.utils.module_loading import import_string
 from django.utils.translation import gettext as _
 
 from network.models import Station
-from network.numerics.readings import Readings
+from network.numerics.records.readings import Readings
 from network.queries import flows, held_gaugings, station_years
 from network.queries.differences import Differences, compared
 from network.queries.flows import StationDays

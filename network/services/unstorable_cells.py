@@ -2,10 +2,10 @@
 
 from collections.abc import Iterator
 
-from network.numerics.gauging_columns import lay_out
-from network.numerics.gauging_faults import Fault, find_faults
-from network.numerics.gauging_input import GaugingSettings, Meter, Point, Sheet, Vertical
-from network.numerics.meter_rating import Piece
+from network.numerics.gaugings.gauging_columns import lay_out
+from network.numerics.gaugings.gauging_faults import Fault, find_faults
+from network.numerics.gaugings.gauging_input import GaugingSettings, Meter, Point, Sheet, Vertical
+from network.numerics.meters.meter_rating import Piece
 from network.numerics.sentences import gettext_noop, sentence
 from network.queries.field_sheets import Boat, FieldSheet, Fills, Floats, Other, Tracer, Weir
 

@@ -8,7 +8,7 @@ from django.utils.translation import gettext as _
 from network.formats import daily_csv
 from network.models import Station
 from network.numerics.marks import Mark
-from network.numerics.water_year import rounded
+from network.numerics.years.water_year import rounded
 from reports import notes, particulars
 from reports.content import daily_table, drawings, facts, field_work, year_data
 from reports.content import particulars as beside

@@ -6,13 +6,13 @@ from datetime import UTC, datetime, timedelta
 
 import numpy as np
 
-from network.numerics.daily import DAY_S, NO_TIME_S, DailyExtremes
-from network.numerics.duration import duration_curve, standard_percentiles
-from network.numerics.earlier_years import EarlierFigures, over_years
-from network.numerics.hidden_peak import may_hide_peak
 from network.numerics.marks import Mark
-from network.numerics.water_year import PeriodFigures, month_figures, year_figures
-from network.numerics.water_year import YearFigures as KernelYear
+from network.numerics.years.daily import DAY_S, NO_TIME_S, DailyExtremes
+from network.numerics.years.duration import duration_curve, standard_percentiles
+from network.numerics.years.earlier_years import EarlierFigures, over_years
+from network.numerics.years.hidden_peak import may_hide_peak
+from network.numerics.years.water_year import PeriodFigures, month_figures, year_figures
+from network.numerics.years.water_year import YearFigures as KernelYear
 from network.queries import flows
 from network.queries.flows import StationDays
 from network.queries.station_inputs import load

@@ -6,9 +6,9 @@ import numpy as np
 import numpy.typing as npt
 
 from network.models import Curve, Station, VisitReading
-from network.numerics.duration import duration_curve
-from network.numerics.earlier_years import day_bands
 from network.numerics.marks import Mark
+from network.numerics.years.duration import duration_curve
+from network.numerics.years.earlier_years import day_bands
 from network.queries import curves, gauges
 from reports.content.daily_table import earlier_label
 from reports.content.field_work import Gauged, gauged

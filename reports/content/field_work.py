@@ -9,7 +9,7 @@ from django.utils.translation import gettext as _
 
 from network.models import Calibration, Gauging, LevelCheck
 from network.numerics.arrays import Floats
-from network.numerics.rating import rate
+from network.numerics.ratings.rating import rate
 from network.queries import in_force, levels
 from network.queries.gaugings import stages_of
 from network.queries.station_inputs import rating_periods

@@ -9,7 +9,7 @@ import numpy.typing as npt
 
 from network.models import Agency, Station
 from network.numerics.arrays import Floats
-from network.numerics.water_year import WaterYear
+from network.numerics.years.water_year import WaterYear
 from network.queries import clock, station_years
 from network.queries.flows import StationDays
 from reports.content.printer import Printer

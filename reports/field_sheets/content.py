@@ -16,9 +16,9 @@ from network.models import (
     Stop,
     VisitReading,
 )
-from network.numerics import curves as kernel
 from network.numerics.arrays import Floats
 from network.numerics.marks import Mark
+from network.numerics.ratings import curves as kernel
 from network.queries import (
     clock,
     curves,

@@ -8,7 +8,7 @@ from django.core.files.uploadedfile import SimpleUploadedFile
 from django.urls import reverse
 
 from network.models import Calibration, Instrument
-from network.numerics.meter_rating import Piece
+from network.numerics.meters.meter_rating import Piece
 from network.services import calibrations, gaugings
 from tests import field_world as world
 

@@ -1,7 +1,7 @@
 """Gauging sheets for the tests, built from plain columns."""
 
-from network.numerics.gauging_input import Bank, Channel, Meter, Point, Sheet, Vertical
-from network.numerics.meter_rating import Piece
+from network.numerics.gaugings.gauging_input import Bank, Channel, Meter, Point, Sheet, Vertical
+from network.numerics.meters.meter_rating import Piece
 
 # v = 0.25·n up to n = 10: easy to reckon by hand.
 METER = Meter((Piece(a_ms=0.0, b_m=0.25, n_from=0.0, n_to=10.0),), spin_test_s=60.0)

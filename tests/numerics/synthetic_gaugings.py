@@ -2,7 +2,7 @@
 
 import numpy as np
 
-from network.numerics.curves import Segment
+from network.numerics.ratings.curves import Segment
 
 JOINT_M = 1.2
 LOWER = Segment(lower_stage_m=0.4, c=5.0, h0_m=0.2, b=1.6)

@@ -6,8 +6,8 @@ from datetime import timedelta
 import pytest
 
 from network.models import Agency, PlateZero, RatingPeriod, StaffPlate
-from network.numerics.gauging_input import Bank, Channel, Point, Vertical
-from network.numerics.other_methods import Fill
+from network.numerics.gaugings.gauging_input import Bank, Channel, Point, Vertical
+from network.numerics.gaugings.other_methods import Fill
 from network.queries import clock, gaugings
 from network.queries.field_sheets import (
     Boat,

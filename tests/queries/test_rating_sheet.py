@@ -6,7 +6,7 @@ import numpy as np
 import pytest
 
 from network.models import Gauging, Note
-from network.numerics.curves import Segment, SegmentCurve
+from network.numerics.ratings.curves import Segment, SegmentCurve
 from network.queries import (
     chart_axes,
     rating_charts,

@@ -2,7 +2,7 @@
 
 import pytest
 
-from network.numerics.gauging_input import Bank, Channel, Vertical
+from network.numerics.gaugings.gauging_input import Bank, Channel, Vertical
 from network.queries import gaugings
 from network.queries.section_drawing import HEIGHT, SURFACE, WIDTH, drawing
 from tests import field_world as world

@@ -6,7 +6,7 @@ import numpy as np
 import pytest
 
 from network.models import Infill, Note
-from network.numerics.flow_uncertainty import u95_percent, volume_classes
+from network.numerics.years.flow_uncertainty import u95_percent, volume_classes
 from network.queries import flows, uncertainty
 from network.services import infills, notes
 from tests import records

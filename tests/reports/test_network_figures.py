@@ -10,7 +10,7 @@ import pytest
 from django.urls import reverse
 
 from network.models import OperationPeriod, StationYear
-from network.numerics.daily import DailyExtremes
+from network.numerics.years.daily import DailyExtremes
 from network.queries import station_years
 from network.queries.flows import StationDays
 from network.queries.network_figures import Period, figures

@@ -6,7 +6,7 @@ from datetime import UTC, date, datetime, timedelta
 import pytest
 
 from network.models import Calibration, MeterPair
-from network.numerics.meter_rating import Piece
+from network.numerics.meters.meter_rating import Piece
 from network.queries import calibrations as answers
 from network.queries import instruments as instrument_answers
 from network.queries import meter_changes

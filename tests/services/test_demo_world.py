@@ -7,9 +7,9 @@ import numpy as np
 import pytest
 
 from network.formats.demo_scenario import read_scenario
-from network.numerics.gauging import compute
-from network.numerics.gauging_input import Meter, Sheet
-from network.numerics.rating import rate
+from network.numerics.gaugings.gauging import compute
+from network.numerics.gaugings.gauging_input import Meter, Sheet
+from network.numerics.ratings.rating import rate
 from network.services.demo_field import (
     calibration_at,
     make_gaugings,

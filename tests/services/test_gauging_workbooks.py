@@ -10,8 +10,8 @@ from openpyxl import load_workbook
 
 from network.formats import gauging_sheet_layout as layout
 from network.models import Agency, Gauging, StaffPlate
-from network.numerics.gauging_input import Bank, Channel, Edge, Point, Vertical
-from network.numerics.meter_rating import Piece
+from network.numerics.gaugings.gauging_input import Bank, Channel, Edge, Point, Vertical
+from network.numerics.meters.meter_rating import Piece
 from network.numerics.printing import fixed_text
 from network.queries import field_sheets
 from network.queries import gaugings as answers

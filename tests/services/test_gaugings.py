@@ -6,7 +6,7 @@ from dataclasses import replace
 import pytest
 
 from network.models import Act, Gauging, Infill
-from network.numerics.gauging_input import Vertical
+from network.numerics.gaugings.gauging_input import Vertical
 from network.queries import field_sheets
 from network.queries import gaugings as answers
 from network.services import gaugings

@@ -10,8 +10,8 @@ from django.core.management.base import CommandError
 from django.db import transaction
 
 from network.models import Block, Office, Person, Station
-from network.numerics.synthetic import make_weather
-from network.numerics.synthetic_station import make_station
+from network.numerics.synthetic.basin import make_weather
+from network.numerics.synthetic.station import make_station
 from network.queries import flows
 from network.services.generated_network import generate
 

@@ -5,7 +5,7 @@ from datetime import UTC, datetime, timedelta
 import pytest
 
 from network.models import Act, Curve, RatingPeriod
-from network.numerics.curves import Segment
+from network.numerics.ratings.curves import Segment
 from network.queries import curves, flows, in_force, rating_points, rating_sheet
 from network.services import ratings
 from network.services.acts import Refusal

@@ -8,8 +8,8 @@ from django.utils.module_loading import import_string
 
 from network.models import Station
 from network.numerics.arrays import Floats
-from network.numerics.rating_fit import fit_rating
-from network.numerics.rating_parts import FitChoice
+from network.numerics.ratings.rating_fit import fit_rating
+from network.numerics.ratings.rating_parts import FitChoice
 from reports.management.benchmark.timing import Ratio, medians, milliseconds
 
 GAUGINGS, LEAST = 500, 5

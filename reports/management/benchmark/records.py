@@ -14,10 +14,10 @@ from django.core.management import call_command
 
 from network.models import Block, CurveSegment, Series, Station
 from network.numerics.arrays import Floats
-from network.numerics.daily import daily_means
-from network.numerics.rating import rate
-from network.numerics.readings import Readings
-from network.numerics.stage import to_stage
+from network.numerics.ratings.rating import rate
+from network.numerics.records.readings import Readings
+from network.numerics.records.stage import to_stage
+from network.numerics.years.daily import daily_means
 from network.queries import blocks, flows
 from network.queries.station_inputs import StationInputs, load
 from reports.management.benchmark import place, rows

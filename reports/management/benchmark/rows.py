@@ -6,7 +6,7 @@ import numpy as np
 import pandas as pd
 from django.db import connection, models
 
-from network.numerics.readings import Readings
+from network.numerics.records.readings import Readings
 
 TABLE = "benchmark_reading"
 COLUMNS = {

@@ -5,8 +5,8 @@ from collections.abc import Iterator
 
 import numpy as np
 
-from network.numerics.gauging import compute
-from network.numerics.gauging_input import (
+from network.numerics.gaugings.gauging import compute
+from network.numerics.gaugings.gauging_input import (
     Bank,
     Channel,
     Meter,
@@ -15,7 +15,7 @@ from network.numerics.gauging_input import (
     StageReading,
     Vertical,
 )
-from network.numerics.meter_rating import Piece
+from network.numerics.meters.meter_rating import Piece
 from reports.management.benchmark.timing import Ratio, Work, medians, milliseconds
 
 VERTICALS = 40

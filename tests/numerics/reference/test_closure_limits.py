@@ -2,7 +2,7 @@
 
 import pytest
 
-from network.numerics.levelling import LevelLimits
+from network.numerics.levels.levelling import LevelLimits
 
 FOOT_MM = 304.8
 

@@ -9,11 +9,11 @@ from datetime import date
 import numpy as np
 import pytest
 
-from network.numerics.blocks import decode_many, encode
-from network.numerics.curves import TableCurve, flow
-from network.numerics.daily import daily_means, day_starts
-from network.numerics.rating import RatingPeriod, rate
-from network.numerics.readings import Readings, split_by_month
+from network.numerics.ratings.curves import TableCurve, flow
+from network.numerics.ratings.rating import RatingPeriod, rate
+from network.numerics.records.blocks import decode_many, encode
+from network.numerics.records.readings import Readings, split_by_month
+from network.numerics.years.daily import daily_means, day_starts
 from tests.numerics.reference.figures import FOOT_M, FT3S_M3S, last_digit, rounded
 from tests.reference import reference_file
 

@@ -9,8 +9,8 @@ from datetime import date
 import numpy as np
 import pytest
 
-from network.numerics.duration import duration_curve, standard_percentiles
-from network.numerics.water_year import (
+from network.numerics.years.duration import duration_curve, standard_percentiles
+from network.numerics.years.water_year import (
     WaterYear,
     month_figures,
     number_text,

@@ -3,9 +3,9 @@
 import numpy as np
 import pytest
 
-from network.numerics.gauging import compute
-from network.numerics.gauging_input import Bank, Channel, Meter, Point, Sheet, Vertical
-from network.numerics.gauging_uncertainty import (
+from network.numerics.gaugings.gauging import compute
+from network.numerics.gaugings.gauging_input import Bank, Channel, Meter, Point, Sheet, Vertical
+from network.numerics.gaugings.gauging_uncertainty import (
     combine,
     depth_percent,
     exposure_percent,

@@ -3,8 +3,8 @@
 import numpy as np
 import pytest
 
-from network.numerics.meter_rating import Piece, joint_gaps, velocity
-from network.numerics.tow_runs import fit_tow_runs
+from network.numerics.meters.meter_rating import Piece, joint_gaps, velocity
+from network.numerics.meters.tow_runs import fit_tow_runs
 
 # NIST Statistical Reference Datasets, Norris (linear least squares, certified values).
 NORRIS_X = (

@@ -3,8 +3,8 @@
 import numpy as np
 import pytest
 
-from network.numerics.gauging import compute
-from network.numerics.gauging_input import (
+from network.numerics.gaugings.gauging import compute
+from network.numerics.gaugings.gauging_input import (
     Bank,
     Channel,
     DischargeMethod,

@@ -4,8 +4,8 @@ import numpy as np
 import pytest
 from scipy.optimize import curve_fit
 
-from network.numerics.rating_fit import fit_rating
-from network.numerics.rating_parts import FitChoice
+from network.numerics.ratings.rating_fit import fit_rating
+from network.numerics.ratings.rating_parts import FitChoice
 from tests.numerics.synthetic_gaugings import (
     JOINT_M,
     LOWER,

@@ -5,8 +5,8 @@ from datetime import UTC, datetime
 import numpy as np
 import pytest
 
-from network.numerics.curves import Segment, SegmentCurve, TableCurve, flow
-from network.numerics.rating import RatingPeriod, rate
+from network.numerics.ratings.curves import Segment, SegmentCurve, TableCurve, flow
+from network.numerics.ratings.rating import RatingPeriod, rate
 from tests.numerics.reference.figures import FOOT_M, FT3S_M3S, rounded
 
 # USGS 01594440, rating 20.0, in force from 2015-10-01, offset 2.00 ft; read.

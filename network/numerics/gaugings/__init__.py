@@ -1,0 +1,1 @@
+"""Gaugings: points and verticals to a discharge, its uncertainty and its findings."""

@@ -1,0 +1,1 @@
+"""Levelling and staff plates: booked sights to elevations, readings to stages."""

@@ -1,0 +1,1 @@
+"""Current meters: tow runs to a rating, revolutions and seconds to a velocity."""

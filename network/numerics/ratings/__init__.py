@@ -1,0 +1,1 @@
+"""Ratings: stage to flow and back, curves fitted and tested, weirs."""

@@ -1,0 +1,1 @@
+"""The stage record: readings, their packed months, corrections, screening."""

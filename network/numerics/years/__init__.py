@@ -1,0 +1,1 @@
+"""Days and years: daily means, infills, the figures of a water year."""
