@@ -4,6 +4,7 @@ The pages are taken over as they are. Their tags are not: merged trees of 200 st
 more than a gigabyte. So the volume does not claim to be tagged; each station's own PDF is.
 """
 
+import gc
 from collections.abc import Sequence
 from dataclasses import dataclass
 from datetime import date
@@ -62,6 +63,7 @@ def contents_of(editions: Sequence[Edition]) -> list[Part]:
 def write(parts: Sequence[Part], out: Any, *, title: str, agency: Agency, bound_on: date) -> None:
     """Write the volume into an open file; the same parts, title and day give the same bytes."""
     front = _front(parts, title=title, agency=agency, bound_on=bound_on)
+    gc.collect()  # the boxes of the front pages form circles; the stations' pages need the room
     with pikepdf.open(BytesIO(front)) as volume:
         _claim_no_tags(volume)
         if len(volume.pages) != _front_pages(len(parts)):

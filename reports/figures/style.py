@@ -94,7 +94,8 @@ def panel(figure: Figure, *, left: float, bottom: float, right: float, top: floa
 
 def title(axes: Axes, text: str) -> None:
     """Write what the upright axis counts above it, level and clear of its numbers."""
-    axes.set_title(text, loc="left", fontsize=TEXT, pad=5)
+    # With y given matplotlib does not measure all axes to find a free place, which takes longest.
+    axes.set_title(text, loc="left", fontsize=TEXT, pad=5, y=1.0)
 
 
 def svg(figure: Figure) -> str:

@@ -1,7 +1,6 @@
 """Ratios of print: one yearbook, memory over many, binding ready PDFs."""
 
 import io
-import resource
 import time
 from collections.abc import Iterator
 from concurrent.futures import ProcessPoolExecutor
@@ -87,8 +86,7 @@ def bind_copies(path: Path) -> tuple[float, float]:
     agency = Agency(name="Benchmark")
     with path.with_name("volume.pdf").open("w+b") as out:
         volumes.write(parts, out, title="Benchmark", agency=agency, bound_on=last)
-    peak_kb = resource.getrusage(resource.RUSAGE_SELF).ru_maxrss
-    return time.process_time() - begun, peak_kb / 1024
+    return time.process_time() - begun, resident_mb(peak=True)
 
 
 def _plain(page: rendering.Page) -> bytes:
