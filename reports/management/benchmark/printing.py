@@ -41,7 +41,7 @@ def ratios(folder: Path, *, runs: int, yearbooks: int) -> Iterator[Ratio]:
     )
     yield Ratio(
         "one yearbook, CPU, to WeasyPrint on the same finished HTML",
-        taken["whole"] / taken["bare"],
+        taken.ratio("whole", "bare"),
         1.4,
         remark=milliseconds(all=taken["whole"], WeasyPrint=taken["bare"]),
     )

@@ -24,7 +24,7 @@ def ratios(station: Station, *, years: int, runs: int) -> Iterator[Ratio]:
     taken = medians(import_string(DOOR)(station), runs=runs)
     yield Ratio(
         f"before and after, {years} years, to twice the chain from the database",
-        taken["trial"] / taken["twice"],
+        taken.ratio("trial", "twice"),
         1.2,
         remark=milliseconds(**taken),
     )

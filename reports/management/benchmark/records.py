@@ -107,7 +107,7 @@ def _kernel(one: Record, *, runs: int, hold: float) -> Iterator[Ratio]:
     told = f"{one.years} years" if one.years > 1 else "1 year"
     yield Ratio(
         f"kernel, stage to daily means, {told}, CPU, to bare power",
-        taken["kernel"] / taken["bare"],
+        taken.ratio("kernel", "bare"),
         hold,
         remark=milliseconds(**taken),
     )
@@ -115,7 +115,7 @@ def _kernel(one: Record, *, runs: int, hold: float) -> Iterator[Ratio]:
         taken = medians({"bare": one.bare_power, "all": one.from_database}, runs=runs)
         yield Ratio(
             f"the same from the database, {told}, to bare power",
-            taken["all"] / taken["bare"],
+            taken.ratio("all", "bare"),
             5,
             remark=milliseconds(**taken),
         )
@@ -136,14 +136,14 @@ def _against_rows(one: Record, *, runs: int) -> Iterator[Ratio]:
     )
     yield Ratio(
         f"rows by ORM + pandas, to the same from the database, {one.years} years",
-        taken["pandas"] / taken["database"],
+        taken.ratio("pandas", "database"),
         15,
         at_least=True,
         remark=milliseconds(pandas=taken["pandas"], database=taken["database"]),
     )
     yield Ratio(
         f"reading rows by ORM, to reading packed months, {one.years} years",
-        taken["rows"] / taken["blocks"],
+        taken.ratio("rows", "blocks"),
         200,
         at_least=True,
         remark=milliseconds(rows=taken["rows"], months=taken["blocks"]),
@@ -191,7 +191,7 @@ def _import(folder: Path, station: Station, *, years: int, runs: int) -> Ratio:
     )
     return Ratio(
         "import of a file, all in, to pandas.read_csv with the same types",
-        taken["import"] / taken["pandas"],
+        taken.ratio("import", "pandas"),
         2.0,
         remark=milliseconds(all=taken["import"], pandas=taken["pandas"]),
     )

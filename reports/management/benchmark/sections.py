@@ -63,7 +63,7 @@ def ratios(*, runs: int) -> Iterator[Ratio]:
     )
     yield Ratio(
         f"gauging of {VERTICALS} verticals with all findings, CPU, to bare arithmetic",
-        taken["kernel"] / taken["bare"],
+        taken.ratio("kernel", "bare"),
         60,
         remark=milliseconds(**{name: spent / TIMES for name, spent in taken.items()}),
     )

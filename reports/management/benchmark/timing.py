@@ -2,7 +2,7 @@
 
 import statistics
 import time
-from collections.abc import Callable, Mapping
+from collections.abc import Callable, Mapping, Sequence
 from dataclasses import dataclass
 from pathlib import Path
 
@@ -35,13 +35,29 @@ class Ratio:
         )
 
 
+class Medians(dict[str, float]):
+    """The median seconds of each work, and the median ratio of two of them, turn by turn.
+
+    Machines go faster and slower over minutes; two works of one turn share the weather.
+    """
+
+    def __init__(self, taken: Mapping[str, Sequence[float]]) -> None:
+        super().__init__({name: statistics.median(each) for name, each in taken.items()})
+        self._turns = taken
+
+    def ratio(self, over: str, under: str) -> float:
+        """Return the median, over the turns, of one work's seconds over another's."""
+        pairs = zip(self._turns[over], self._turns[under], strict=True)
+        return statistics.median(above / below for above, below in pairs)
+
+
 def medians(
     works: Mapping[str, Work],
     *,
     runs: int,
     clock: Callable[[], float] = time.perf_counter,
     prepare: Work = lambda: None,
-) -> dict[str, float]:
+) -> Medians:
     """Return the median seconds of each work, the works taking turns; one round goes before.
 
     prepare is done before each round and not measured.
@@ -54,7 +70,7 @@ def medians(
             work()
             if turn:
                 taken[name].append(clock() - begun)
-    return {name: statistics.median(seconds) for name, seconds in taken.items()}
+    return Medians(taken)
 
 
 def milliseconds(**seconds: float) -> str:

@@ -64,7 +64,7 @@ def measure(*, runs: int) -> Iterator[Ratio]:
     with CaptureQueriesContext(connection) as made:
         page()
     what = f"work due, {whole.total} lines, against a stored column"
-    yield Ratio(what, taken["computed"] / taken["stored"], HOLD, remark=milliseconds(**taken))
+    yield Ratio(what, taken.ratio("computed", "stored"), HOLD, remark=milliseconds(**taken))
     yield Ratio("queries of the work-due page", len(made), MOST_QUERIES, unit="")
 
 
