@@ -200,7 +200,13 @@ def _lines(block: TextBlock, indices: Iterable[int]) -> Iterator[tuple[int, str]
 
 
 def _implausible(text: str, profile: Profile) -> Sentence:
-    return _("the time “%(text)s” lies outside the plausible years", text=text[:60])
+    first, last = (np.datetime64(at, "s") for at in (profile.earliest_s, profile.latest_s))
+    return _(
+        "the time “%(text)s” does not lie between %(first)s and %(last)s",
+        text=text[:60],
+        first=str(first.astype("datetime64[D]")),
+        last=str(last.astype("datetime64[D]")),
+    )
 
 
 def _time_and_value(line: str, layout: Layout) -> tuple[str, float | Sentence | None]:
@@ -210,7 +216,7 @@ def _time_and_value(line: str, layout: Layout) -> tuple[str, float | Sentence | 
     except csv.Error:
         return "", _("the quotes in the row do not close")
     if len(cells) <= max(*layout.time_indices, layout.value_index):
-        return "", _("the row has only %(n)d columns", n=len(cells))
+        return "", _("too few columns in the row: %(n)d", n=len(cells))
     if any(cell.strip() for cell in cells[layout.column_count :]):
         return "", _(
             "the row has %(n)d columns, the first one %(first)d",

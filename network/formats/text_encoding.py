@@ -12,7 +12,7 @@ import numpy.typing as npt
 from network.formats.faults import FileFault
 from network.formats.faults import sentence as _
 
-BLOCK_BYTES = 1 << 20
+BLOCK_BYTES = 1 << 21
 MAX_LINE_BYTES = 10_000
 # Tab, line feed, carriage return, the old end-of-file mark and escape may stand in a text.
 CONTROL_BYTES = bytes(set(range(32)) - {9, 10, 12, 13, 26, 27})

@@ -7,15 +7,16 @@ from datetime import UTC, datetime, timedelta
 import numpy as np
 
 from network.numerics.marks import Mark
+from network.numerics.records.stage import to_stage
 from network.numerics.years.daily import DAY_S, NO_TIME_S, DailyExtremes
 from network.numerics.years.duration import duration_curve, standard_percentiles
 from network.numerics.years.earlier_years import EarlierFigures, over_years
 from network.numerics.years.hidden_peak import may_hide_peak
 from network.numerics.years.water_year import PeriodFigures, month_figures, year_figures
 from network.numerics.years.water_year import YearFigures as KernelYear
-from network.queries import flows
+from network.queries import blocks
 from network.queries.flows import StationDays
-from network.queries.station_inputs import load
+from network.queries.station_inputs import series_inputs
 from reports import yearbook as y
 from reports.content.year_data import YearData
 from reports.printed import NO_EVENT, RECORDED, Event, Number
@@ -247,11 +248,15 @@ def _told(data, value, instant, day, *, at_least: bool) -> y.Extreme:
 
 def _stage_at(data: YearData, instant: datetime) -> float | None:
     """Return the stage of the record at the instant of an extreme flow."""
-    offset = timedelta(hours=data.agency.day_starts_at_hour)
-    day = (instant.astimezone(data.clock) - offset).date()
-    inputs = load(data.station, day, day, with_infills=False)
-    record = flows.rated_record(inputs, inputs.series, flows.readings_of(inputs))
-    if not len(record.times_s):
+    series = data.station.series.filter(is_primary=True).first()
+    at_s, day = int(instant.timestamp()), timedelta(seconds=DAY_S)
+    if series is None:
         return None
-    found = np.interp(instant.timestamp(), record.times_s, record.stage_m)
-    return float(found) if abs(record.times_s - instant.timestamp()).min() < DAY_S else None
+    raw = blocks.read(series.pk, at_s - DAY_S, at_s + DAY_S)
+    if not len(raw):
+        return None
+    inputs = series_inputs(series, instant - day, instant + day)
+    stage_m = to_stage(
+        raw.times_s, raw.values_m, settings=inputs.settings, corrections=inputs.corrections
+    )
+    return float(np.interp(at_s, raw.times_s, stage_m))

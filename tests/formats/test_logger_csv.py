@@ -93,13 +93,13 @@ GOOD = "".join(f"2018-11-04 00:{minute:02},1.5\n" for minute in range(10))
         ("2018-11-04 00:30,1_0", "the value “1_0” cannot be read as a number"),
         ("2018-11-04 00:30,ERR", "the value “ERR” cannot be read as a number"),
         ("2018-11-04 00:30,1,25", "the row has 3 columns, the first one 2"),
-        ("2018-11-04 00:3", "the row has only 1 columns"),
+        ("2018-11-04 00:3", "too few columns in the row: 1"),
         ("2018-11-31 00:30,1.5", "“2018-11-31 00:30” is no time in the format ISO"),
         ("04/11/2018 00:30,1.5", "“04/11/2018 00:30” is no time in the format ISO"),
         ("now,1.5", "“now” is no time in the format ISO"),
         (",1.5", "the time is empty"),
         ("NaT,1.5", "“NaT” is no time in the format ISO"),
-        ("3024-01-01,1.5", "the time “3024-01-01” lies outside the plausible years"),
+        ("3024-01-01,1.5", "the time “3024-01-01” does not lie between 1800-01-01 and 2200-01-01"),
         ('"2018-11-04 00:30,1.5', "the quotes in the row do not close"),
     ],
 )
@@ -203,7 +203,7 @@ class Endless(io.RawIOBase):
         (HEAD + "2018-11-04,-\n", {"missing": ("-",)}, "Every row of the file is marked as mis"),
         (HEAD + "," * 300 + "\n", {}, "The file has 301 columns; at most 200 are read."),
         (HEAD + GOOD + "9" * 10_001 + "\n", {}, "Line 12 is longer than 10000 characters"),
-        (HEAD + GOOD * 9000 + "9" * 10_001 + "\n", {}, "Line 90002 is longer than 10000 char"),
+        (HEAD + GOOD * 20_000 + "9" * 10_001 + "\n", {}, "Line 90002 is longer than 10000 char"),
     ],
 )  # fmt: skip
 def test_a_file_that_is_no_logger_file_is_refused_with_a_sentence(data, profile, sentence):
@@ -249,7 +249,7 @@ def test_a_file_of_201_mb_is_refused(seekable):
 
 
 def test_progress_and_hash_cover_every_byte():
-    data = (HEAD + GOOD * 9000).encode()
+    data = (HEAD + GOOD * 20_000).encode()
     seen = []
     file = read(io.BytesIO(data), Profile(), progress=lambda *done: seen.append(done))
     assert seen[-1] == (len(data), len(data))
@@ -259,7 +259,7 @@ def test_progress_and_hash_cover_every_byte():
 
 
 def test_letters_outside_utf_8_may_first_appear_far_down():
-    data = (HEAD + GOOD * 9000).encode() + "2018-11-04 00:20,2 # Böe\n".encode("latin-1")
+    data = (HEAD + GOOD * 20_000).encode() + "2018-11-04 00:20,2 # Böe\n".encode("latin-1")
     file = read_text(data)
     assert file.encoding == "cp1252"
     assert [fault.text for fault in file.faults if not fault.kept] == ["2018-11-04 00:20,2 # Böe"]

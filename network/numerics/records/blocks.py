@@ -3,8 +3,7 @@
 import struct
 import zlib
 from collections.abc import Iterable, Sequence
-from dataclasses import dataclass
-from typing import Any
+from typing import Any, NamedTuple
 
 import numpy as np
 import numpy.typing as npt
@@ -20,6 +19,7 @@ COARSE_DECIMALS, FINE_DECIMALS = 3, 4  # 1 mm, or 0.1 mm where a reading needs i
 FARTHEST_M = 100_000.0  # no stage or elevation lies farther out; differences then fit 32 bits
 LONGEST_STEP_S = 2**32 - 1
 
+WIDTHS = {width: np.dtype(f"<u{width}") for width in (1, 2, 4)}
 ZERO, ONE = np.zeros(1, np.uint8), np.ones(1, np.uint8)
 
 Unsigned = npt.NDArray[np.unsignedinteger]
@@ -60,17 +60,16 @@ def decode_many(blocks: Iterable[bytes | bytearray | memoryview]) -> Readings:
 
     Raises BlockError for damaged bytes and ReadingsError where the blocks are out of order.
     """
-    opened = [one for one in (_open(memoryview(block)) for block in blocks) if one.count]
+    opened = [one for one in (_open(memoryview(block)) for block in blocks) if one.readings]
     if not opened:
         return no_readings()
-    starts = np.cumsum([0, *(one.count for one in opened[:-1])])
+    starts = np.cumsum([0, *(one.readings for one in opened[:-1])])
     return Readings(_times(opened, starts), _values(opened, starts), _flags(opened))
 
 
-@dataclass(frozen=True, slots=True)
-class _Opened:
+class _Opened(NamedTuple):
     decimals: int
-    count: int
+    readings: int
     first_s: int
     first_unit: int
     steps: Unsigned
@@ -133,7 +132,7 @@ def _unpack(body: bytes, start: int) -> tuple[Unsigned, int]:
     if width == 0:
         return np.zeros(count, np.uint8), stop
     if width == 1 or (count == 1 and width in (2, 4)):  # no planes to put together
-        return np.frombuffer(body, f"<u{width}", count, start), stop
+        return np.frombuffer(body, WIDTHS[width], count, start), stop
     values = np.zeros(count, "<u2" if width == 2 else "<u4")
     planes = np.frombuffer(body, np.uint8, width * count, start).reshape(width, count)
     values.view(np.uint8).reshape(count, values.itemsize)[:, :width] = planes.T
@@ -179,7 +178,7 @@ def _values(opened: Sequence[_Opened], starts: Places) -> Floats:
     units = _summed_up(differences, [one.first_unit for one in opened], starts)
     scales = [10**one.decimals for one in opened]
     one_scale = len(set(scales)) == 1
-    by = scales[0] if one_scale else np.repeat(scales, [one.count for one in opened])
+    by = scales[0] if one_scale else np.repeat(scales, [one.readings for one in opened])
     values_m: Floats = np.divide(units, by, dtype=np.float64)
     return values_m
 

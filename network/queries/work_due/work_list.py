@@ -22,6 +22,7 @@ from network.queries.work_due.station_items import StationRow
 from network.queries.working_rules import rules
 
 PER_PAGE = 50
+RANKS = {kind: (URGENCY.get(kind, LEAST_URGENT), str(kind)) for kind in Kind}
 
 
 @dataclass(frozen=True)
@@ -212,7 +213,8 @@ def _passes(item: Item, filters: Filters, stations: Mapping[int, StationRow]) ->
 
 
 def _order(item: Item) -> tuple[int, date, str, int]:
-    return URGENCY.get(item.kind, LEAST_URGENT), item.due_on, str(item.kind), item.key
+    urgency, name = RANKS[item.kind]
+    return urgency, item.due_on, name, item.key
 
 
 def _line(
