@@ -106,7 +106,7 @@ def test_a_file_that_is_there_already_offers_no_import(keeper_client, upload):
         ("", "The file is empty."),
         (bytes(range(256)), "The file is binary"),
         ("time,level\n", "header but no rows"),
-        (TEXT.replace("2024", "3024"), "plausible"),
+        (TEXT.replace("2024", "3024"), "does not lie between"),
     ],
 )
 def test_a_file_that_cannot_be_used_is_refused_at_its_field(upload, text, sentence):
