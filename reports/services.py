@@ -175,6 +175,7 @@ def _next_edition(
     *, station: Station, year: int, by: Person, at: datetime, reason: str, language: str
 ) -> Edition:
     """Return the next edition of a year, not saved; it takes the row of one never issued."""
+    refresh(station)  # the year and those printed beside it: each is computed once
     calendar = station_years.calendar()
     latest = editions.latest(station, calendar.first_day(year))
     again = latest is not None and latest.state == Edition.State.COMPILED
@@ -247,7 +248,6 @@ def _open_points(station: Station, year: int, language: str | None = None) -> li
 def _write_files(edition: Edition, year: int, progress: Report = _no_progress) -> None:
     """Compile content, PDF and data and name them by their hashes."""
     progress(0, 2)
-    refresh(edition.station)  # earlier years print beside this one; each is computed once
     try:
         content, values = book.compile_book(
             edition.station, year, edition=_particulars(edition), language=edition.language

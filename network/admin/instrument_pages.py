@@ -11,7 +11,7 @@ from django.utils.translation import gettext_lazy as _
 
 from network.admin.verbs import Verb
 from network.models import Instrument, MeterPair
-from network.queries import clock, instruments
+from network.queries import clock, instruments, working_rules
 from network.queries.instruments import CalibrationDue
 from network.services import instruments as acts
 
@@ -70,7 +70,7 @@ def about(instrument: Instrument) -> dict[str, Any]:
 
 def _dues(instrument: Instrument, pairs: list[MeterPair]) -> Any:
     now = timezone.now()
-    today, rules = clock.record_day(now, of=clock.agency()), instruments.rules()
+    today, rules = clock.record_day(now, of=clock.agency()), working_rules.rules()
     for pair in pairs:
         due = instruments.pair_due(pair, now, of=rules)
         yield pair, Due(due, due.is_due(today))

@@ -33,11 +33,15 @@ class MeterThen:
     meter: Meter
 
 
+def that_count() -> "QuerySet[Calibration]":
+    """Return the standing calibrations but the failed, which leave a meter as it was before."""
+    return Calibration.objects.standing().exclude(outcome=Calibration.Outcome.FAILED)
+
+
 def in_force_rows(pair_id: int, instant: datetime) -> "QuerySet[Calibration]":
     """Return the standing calibrations of a pair by then: its own first, then its group's."""
     owned = Q(pair=pair_id) | Q(group__pairs=pair_id)
-    rows = Calibration.objects.standing().filter(owned, effective_from__lte=instant)
-    rows = rows.exclude(outcome=Calibration.Outcome.FAILED)
+    rows = that_count().filter(owned, effective_from__lte=instant)
     return rows.order_by(F("pair").asc(nulls_last=True), "-effective_from")
 
 

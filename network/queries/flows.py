@@ -93,13 +93,15 @@ def rated_record(
     if series is None or not len(readings):
         nothing = np.empty(0)
         return Rated(np.empty(0, np.int64), nothing, nothing, np.empty(0, np.uint8))
-    stage_m = to_stage(
-        readings.times_s,
-        readings.values_m,
-        settings=series.settings,
-        corrections=series.corrections,
-    )
+    stage_m = stage_of(series, readings)
     return rate(readings.times_s, stage_m, periods=inputs.periods, gap_limit_s=series.gap_limit_s)
+
+
+def stage_of(series: SeriesInputs, raw: Readings) -> Floats:
+    """Turn the raw readings of a series into stage, m: float64 of their length."""
+    return to_stage(
+        raw.times_s, raw.values_m, settings=series.settings, corrections=series.corrections
+    )
 
 
 def compute(inputs: StationInputs, raw: Mapping[int, Readings]) -> StationDays:

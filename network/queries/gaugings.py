@@ -27,8 +27,8 @@ from network.numerics.sentences import gettext_noop, sentence
 from network.queries import calibrations, clock, other_methods, station_facts
 from network.queries.field_sheets import FieldSheet, known_stages, of_gauging
 from network.queries.in_force import seconds
-from network.queries.instruments import rules
 from network.queries.station_facts import StationFacts
+from network.queries.working_rules import rules
 
 STATED = gettext_noop("The uncertainty rests on a value of the agency: {case}.")
 NO_STANDARD = gettext_noop("agency setting; the tables of ISO 748:2007 say nothing")

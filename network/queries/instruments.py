@@ -18,6 +18,7 @@ from network.models import (
 )
 from network.numerics.due_dates import months_after
 from network.queries import calibrations, clock
+from network.queries.working_rules import rules
 
 METER_KINDS = {Instrument.Kind.METER_BODY, Instrument.Kind.METER_ROTOR}
 
@@ -44,11 +45,6 @@ class CalibrationDue:
         return by_hours or (self.due_on is not None and self.due_on <= on)
 
 
-def rules() -> WorkingRules:
-    """Return the agency's rules, or those of common practice before set-up has run."""
-    return WorkingRules.objects.filter(pk=1).first() or WorkingRules(pk=1)
-
-
 def pair_due(pair: MeterPair, at: datetime, *, of: WorkingRules) -> CalibrationDue:
     """Tell when a current meter is due: its own intervals, its kind's or the agency's."""
     last = calibrations.in_force(pair, at)
@@ -64,10 +60,11 @@ def pair_due(pair: MeterPair, at: datetime, *, of: WorkingRules) -> CalibrationD
 
 def instrument_due(instrument: Instrument, at: datetime) -> CalibrationDue:
     """Tell when an instrument other than a meter is due, by its own interval or its kind's."""
-    rows = instrument.calibrations.standing().filter(effective_from__lte=at)
-    rows = rows.exclude(outcome=Calibration.Outcome.FAILED).order_by("effective_from")
+    rows = calibrations.that_count().filter(instrument=instrument, effective_from__lte=at)
     months, _hours = _intervals(instrument)
-    return _due(rows.last(), months=months, hours_used=0.0, hours_limit=None)
+    return _due(
+        rows.order_by("effective_from").last(), months=months, hours_used=0.0, hours_limit=None
+    )
 
 
 def standing_place(instrument: Instrument, at: datetime) -> Deployment | None:

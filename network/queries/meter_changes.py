@@ -12,7 +12,7 @@ from network.numerics.meters.meter_rating import RatingChange, compare
 from network.queries import calibrations, clock, station_facts
 from network.queries.field_sheets import of_gauging
 from network.queries.gaugings import kernel_sheet, settings_of
-from network.queries.instruments import rules
+from network.queries.working_rules import rules
 
 
 @dataclass(frozen=True)

@@ -10,51 +10,40 @@ from network.models import Agency
 
 
 class AsFound(Field):
-    """A whole number taken as the database gives it: to convert thousands takes longer than to
-    find them.
+    """A whole number as the database gives it: converting thousands takes longer than finding them.
+
+    It stands in queries only, in no model.
     """
 
 
-class RecordDay(Func):
-    """The record day of an expression of instants, as a number; `day` makes a date of it.
-
-    See queries.clock.record_day.
-    """
+class DayNumber(Func):
+    """A date as a number; `day` makes a date of it again."""
 
     output_field = AsFound()
+    date_on_sqlite, date_on_postgresql = "%(expressions)s", "(%(expressions)s)"
+
+    def as_sqlite(self, compiler: Any, connection: Any, **context: Any) -> Any:
+        """Write it for SQLite, which keeps dates as text; 1721424.5 ends before day 1."""
+        template = f"CAST(julianday({self.date_on_sqlite}) - 1721424.5 AS integer)"
+        return self.as_sql(compiler, connection, template=template, **context)
+
+    def as_postgresql(self, compiler: Any, connection: Any, **context: Any) -> Any:
+        """Write it for PostgreSQL."""
+        template = f"({self.date_on_postgresql} - date '0001-01-01' + 1)"
+        return self.as_sql(compiler, connection, template=template, **context)
+
+
+class RecordDay(DayNumber):
+    """The record day of an expression of instants, as a number; see queries.clock.record_day."""
+
+    date_on_sqlite = "%(expressions)s, '%(ahead)d minutes', 'start of day'"
+    date_on_postgresql = (
+        "((%(expressions)s) AT TIME ZONE 'UTC' + interval '%(ahead)d minutes')::date"
+    )
 
     def __init__(self, instant: Combinable | str, *, of: Agency) -> None:
         ahead = of.record_utc_offset_minutes - 60 * of.day_starts_at_hour
         super().__init__(instant, ahead=ahead)
-
-    def as_sqlite(self, compiler: Any, connection: Any, **context: Any) -> Any:
-        """Write it for SQLite, which keeps instants as text in UTC; 1721424.5 ends before day 1."""
-        day = "julianday(%(expressions)s, '%(ahead)d minutes', 'start of day')"
-        template = f"CAST({day} - 1721424.5 AS integer)"
-        return self.as_sql(compiler, connection, template=template, **context)
-
-    def as_postgresql(self, compiler: Any, connection: Any, **context: Any) -> Any:
-        """Write it for PostgreSQL."""
-        ahead = " + interval '%(ahead)d minutes'" if self.extra["ahead"] else ""
-        day = f"((%(expressions)s) AT TIME ZONE 'UTC'{ahead})::date"
-        template = f"({day} - date '0001-01-01' + 1)"
-        return self.as_sql(compiler, connection, template=template, **context)
-
-
-class DayNumber(Func):
-    """A date as a number, as RecordDay gives it."""
-
-    output_field = AsFound()
-
-    def as_sqlite(self, compiler: Any, connection: Any, **context: Any) -> Any:
-        """Write it for SQLite, which keeps dates as text."""
-        template = "CAST(julianday(%(expressions)s) - 1721424.5 AS integer)"
-        return self.as_sql(compiler, connection, template=template, **context)
-
-    def as_postgresql(self, compiler: Any, connection: Any, **context: Any) -> Any:
-        """Write it for PostgreSQL."""
-        template = "((%(expressions)s) - date '0001-01-01' + 1)"
-        return self.as_sql(compiler, connection, template=template, **context)
 
 
 class Negative(Func):

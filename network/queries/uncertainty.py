@@ -4,7 +4,7 @@ from datetime import date
 
 import numpy as np
 
-from network.models import RatingPeriod, Station, WorkingRules
+from network.models import RatingPeriod, Station
 from network.numerics.arrays import Floats, Seconds
 from network.numerics.marks import Mark
 from network.numerics.ratings.rating import Rated
@@ -12,6 +12,7 @@ from network.numerics.years.flow_uncertainty import daily_u95_m3s, estimated_u95
 from network.queries import clock, curves, flows, in_force
 from network.queries.flows import StationDays
 from network.queries.station_inputs import ONE_DAY, load
+from network.queries.working_rules import rules
 
 STATED = Mark.ESTIMATED | Mark.TYPED
 
@@ -64,11 +65,10 @@ def _under(period: RatingPeriod, stage_m: Floats) -> Floats:
     percent = np.interp(stage_m, *np.array(band).T)
     flow = curve.flow_at(stage_m)
     half = flow * percent / 100
-    rules = WorkingRules.objects.filter(pk=1).first() or WorkingRules()
     return flow_u95_m3s(
         stage_m,
         flow_at=curve.flow_at,
         band_m3s=(flow - half, flow + half),
         scatter=(period.curve.scatter_percent or 0.0) / 100,
-        u_stage_m=rules.stage_uncertainty_mm / 1000,
+        u_stage_m=rules().stage_uncertainty_mm / 1000,
     )

@@ -19,8 +19,8 @@ from network.numerics.gaugings.sounding_lines import WET_LINE_ANGLES_DEG, WET_LI
 from network.queries import calibrations, clock
 from network.queries.field_sheets import FieldSheet, Heading, StageRow, of_gauging
 from network.queries.gaugings import settings_of
-from network.queries.instruments import rules
 from network.queries.sheet_lines import Line, lines_of, near, table_of
+from network.queries.working_rules import rules
 from network.services import gaugings
 from network.services.acts import Overtaken, Refusal
 

@@ -7,14 +7,13 @@ from datetime import UTC, datetime, timedelta
 import numpy as np
 
 from network.numerics.marks import Mark
-from network.numerics.records.stage import to_stage
 from network.numerics.years.daily import DAY_S, NO_TIME_S, DailyExtremes
 from network.numerics.years.duration import duration_curve, standard_percentiles
 from network.numerics.years.earlier_years import EarlierFigures, over_years
 from network.numerics.years.hidden_peak import may_hide_peak
 from network.numerics.years.water_year import PeriodFigures, month_figures, year_figures
 from network.numerics.years.water_year import YearFigures as KernelYear
-from network.queries import blocks
+from network.queries import blocks, flows
 from network.queries.flows import StationDays
 from network.queries.station_inputs import series_inputs
 from reports import yearbook as y
@@ -255,8 +254,5 @@ def _stage_at(data: YearData, instant: datetime) -> float | None:
     raw = blocks.read(series.pk, at_s - DAY_S, at_s + DAY_S)
     if not len(raw):
         return None
-    inputs = series_inputs(series, instant - day, instant + day)
-    stage_m = to_stage(
-        raw.times_s, raw.values_m, settings=inputs.settings, corrections=inputs.corrections
-    )
+    stage_m = flows.stage_of(series_inputs(series, instant - day, instant + day), raw)
     return float(np.interp(at_s, raw.times_s, stage_m))

@@ -66,7 +66,8 @@ def decode_many(blocks: Iterable[bytes | bytearray | memoryview]) -> Readings:
         return no_readings()
     starts = np.cumsum([0, *(one.readings for one in opened[:-1])])
     columns = _times(opened, starts), _values(opened, starts), _flags(opened)
-    return Readings.known(*columns) if _in_order(opened, columns[0]) else Readings(*columns)
+    in_order = _in_order(opened, starts, columns[0])
+    return Readings.known(*columns) if in_order else Readings(*columns)
 
 
 class _Opened(NamedTuple):
@@ -174,12 +175,11 @@ def _times(opened: Sequence[_Opened], starts: Places) -> Seconds:
     return _summed_up(steps_s, [one.first_s for one in opened], starts)
 
 
-def _in_order(opened: Sequence[_Opened], times_s: Seconds) -> bool:
+def _in_order(opened: Sequence[_Opened], starts: Places, times_s: Seconds) -> bool:
     """Tell whether times rise, by the few steps and the ends of the blocks alone."""
     if any(len(one.steps) and not one.steps.all() for one in opened):
         return False
-    begin = np.cumsum([one.readings for one in opened[:-1]], dtype=np.intp)
-    return bool((times_s[begin] > times_s[begin - 1]).all())
+    return bool((times_s[starts[1:]] > times_s[starts[1:] - 1]).all())
 
 
 def _values(opened: Sequence[_Opened], starts: Places) -> Floats:

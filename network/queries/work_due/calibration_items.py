@@ -8,9 +8,9 @@ from typing import Any, NamedTuple
 from django.db.models import CharField, F, OuterRef, Q, QuerySet, Subquery, Sum, Value
 from django.db.models.functions import Coalesce
 
-from network.models import Calibration, Gauging, Instrument, KindInterval, MeterPair
+from network.models import Gauging, Instrument, KindInterval, MeterPair
 from network.numerics.due_dates import SHORTEST_MONTH_DAYS, months_after
-from network.queries import clock
+from network.queries import calibrations, clock
 from network.queries.instruments import METER_KINDS
 from network.queries.record_days import AsFound, HoursBetween, RecordDay, day
 from network.queries.work_due.items import Asked, Item, Kind
@@ -75,7 +75,7 @@ def _calibrated_lately(asked: Asked) -> QuerySet[Any]:
     of_kind = KindInterval.objects.filter(kind=OuterRef("instrument__kind")).values("months")[:1]
     own = F("instrument__interval_months")
     days = SHORTEST_MONTH_DAYS * Coalesce(own, Subquery(of_kind), 0, output_field=AsFound())
-    rows = _that_count().filter(instrument__isnull=False)
+    rows = calibrations.that_count().filter(instrument__isnull=False)
     rows = rows.alias(day=RecordDay("effective_from", of=asked.agency), days=days)
     return rows.filter(day__gt=asked.until.toordinal() - F("days")).values("instrument")
 
@@ -137,13 +137,8 @@ def _columns(
 
 
 def _latest(**owner: OuterRef) -> Subquery:
-    rows = _that_count().filter(**owner).order_by("-effective_from")
+    rows = calibrations.that_count().filter(**owner).order_by("-effective_from")
     return Subquery(rows.values("effective_from")[:1])
-
-
-def _that_count() -> QuerySet[Any]:
-    """Return standing calibrations; a failed one leaves an instrument uncalibrated."""
-    return Calibration.objects.standing().exclude(outcome=Calibration.Outcome.FAILED)
 
 
 def _row(

@@ -118,10 +118,8 @@ def work_list(
     kept = list(found.items)
     if filters.office is not None or filters.river:
         kept = [item for item in kept if _passes(item, filters, by_station)]
-    hidden = [item for item in kept if _hidden(item, put_off)] if put_off else []
-    shown = kept
-    if hidden and not filters.with_postponed:
-        shown = [item for item in kept if not _hidden(item, put_off)]
+    still_due = [item for item in kept if not _hidden(item, put_off)] if put_off else kept
+    shown = kept if filters.with_postponed else still_due
     counts = Counter(item.kind for item in shown)
     chosen = [item for item in shown if filters.kind in (None, item.kind)]
     chosen.sort(key=_order)
@@ -138,7 +136,7 @@ def work_list(
         lines=_with_bands(lines, at) if with_bands else lines,
         counts={kind: counts[kind] for kind in Kind if counts[kind]},
         total=len(chosen),
-        postponed=len(hidden),
+        postponed=len(kept) - len(still_due),
         page=page,
         pages=pages,
         offices=tuple(sorted(offices.items(), key=lambda pair: pair[1])),
